@@ -1,0 +1,1 @@
+"""Files that others write and read: the site file and the result file."""

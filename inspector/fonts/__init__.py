@@ -1,0 +1,1 @@
+"""DejaVu Sans, regular and bold, with its licence."""

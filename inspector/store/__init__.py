@@ -1,0 +1,1 @@
+"""The store: structures in tables, an append-only journal, SQLite underneath."""

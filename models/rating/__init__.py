@@ -1,0 +1,1 @@
+"""Prepare a bridge once, rate it after every reading."""

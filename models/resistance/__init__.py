@@ -1,0 +1,1 @@
+"""What a bar can carry, by published methods: one module a basis."""

@@ -1,0 +1,1 @@
+"""Sections as plates: nominal and remaining properties of every shape."""

@@ -1,0 +1,1 @@
+"""Equilibrium, stability and forces of plane pin-jointed trusses."""
