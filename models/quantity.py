@@ -130,7 +130,7 @@ def pattern(dimension: Dimension) -> str:
     """The same grammar as a regular expression (ECMA 262), for a JSON Schema."""
     units = sorted(UNITS[dimension], key=lambda unit: (-len(unit), unit))
     spelled = "|".join(_spellings(unit) for unit in units)
-    number = r"(?:(?:[0-9]+ )?[0-9]+/0*[1-9][0-9]*|[0-9]+(?:\.[0-9]+|,(?![0-9]{{3}}(?![0-9]))[0-9]+)?)"
+    number = r"(?:(?:[0-9]+ )?[0-9]+/0*[1-9][0-9]*|[0-9]+(?:\.[0-9]+|,(?![0-9]{3}(?![0-9]))[0-9]+)?)"
     feet = rf"|[0-9]+ ft {number} in" if dimension == "length" else ""
     return rf"^-?(?:{number} (?:{spelled}){feet})$"
 
