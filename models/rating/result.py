@@ -7,9 +7,7 @@ from dataclasses import dataclass
 from typing import Literal
 
 from models.finding import Finding
-
-Verdict = Literal["determinate", "redundant", "mechanism", "nearly a mechanism"]
-
+from models.statics.stability import Verdict
 
 @dataclass(frozen=True, slots=True)
 class Effect:
