@@ -6,10 +6,11 @@ Numbers inside the program are SI floats; only here do they meet a unit again.
 from __future__ import annotations
 
 import math
+from collections.abc import Callable, Iterator
 from dataclasses import dataclass
 from typing import Final
 
-from models.calculation import Kind
+from models.calculation import Kind, Step, Traced
 
 CAUTION: Final = (
     "Preliminary figures. The final rating needs a licensed engineer; local codes and the owner's "
@@ -110,3 +111,433 @@ class Figures:
     @property
     def _table(self) -> dict[Kind, tuple[str, float]]:
         return _US if self.units == "US" else _SI
+
+
+# --- rating ---
+
+NOT_RATED: Final = (
+    "connections and gussets",
+    "pins",
+    "bearings",
+    "floor beams and stringers under local load",
+    "deck",
+    "lateral bracing",
+    "wind",
+    "fatigue",
+    "foundations",
+)
+"""What no figure of this program speaks of."""
+
+ACT_NOW_STEPS: Final = (
+    "Keep people off the bridge.",
+    "Call the responsible engineer, then the owner.",
+    "Stay until relieved; note who was told, and when.",
+)
+"""Plain steps for a finding `act now` (common practice, no source)."""
+
+
+def severed(bar: str) -> str:
+    """A bar is cut through."""
+    return f"{bar} is severed; it carries nothing and all others are solved without it."
+
+
+def no_steel_left(bar: str) -> str:
+    """No plate is left somewhere along a bar."""
+    return f"The readings on {bar} leave no steel at one place; it is treated as severed."
+
+
+def cracked_out(bar: str) -> str:
+    """A cracked bar in tension."""
+    return (
+        f"{bar} is cracked and pulled by the factored loads; it gets no credit until an engineer has assessed the "
+        "crack. The figures are those without it."
+    )
+
+
+def cracked_in(bar: str) -> str:
+    """A cracked bar that no factored load pulls."""
+    return (
+        f"{bar} is cracked; no factored load pulls it, so it stays in. What the crack does in compression is left out."
+    )
+
+
+def mechanism(truss: str, joints: tuple[str, ...], bars: tuple[str, ...], *, nearly: bool) -> str:
+    """A truss that can move."""
+    what = "is nearly a mechanism" if nearly else "is a mechanism: it has no equilibrium as a pin-jointed truss"
+    loose = f" Bars between moving and still joints: {listed(bars)}." if bars else ""
+    moving = f" {count(len(joints), 'joint moves', 'joints move')}: {listed(joints)}." if joints else ""
+    return f"Truss {truss} {what}. There are no forces and no rating factors.{moving}{loose}"
+
+
+def dead_exceeds(bar: str, direction: str, margin: str) -> str:
+    """Dead load alone is more than a bar can carry."""
+    what = f"what {bar} can carry in {direction}, by {margin}"
+    return f"The factored dead load alone exceeds {what}; its rating factor is 0."
+
+
+def below_trigger(bar: str, found: float, trigger: float) -> str:
+    """The owner's trigger is met."""
+    limit = f"the {factor(trigger)} at which the owner wants to be called"
+    return f"{bar} has a rating factor of {factor(found)}, below {limit}."
+
+
+def pushed(bar: str) -> str:
+    """A bar that cannot push is pushed."""
+    return (
+        f"{bar} can only pull, but the loads push it. It is solved as if it could push; its forces and those of its "
+        "neighbours leave out that it would go slack."
+    )
+
+
+def slender_plate(plates: tuple[str, ...]) -> str:
+    """Thin plates in compression."""
+    noun = "plate is" if len(plates) == 1 else "plates are"
+    what = "too slender for the whole section to count"
+    return f"The {listed(plates)} {noun} {what}; the compression figure leaves that out."
+
+
+def not_doubly_symmetric() -> str:
+    """Flexural-torsional buckling is not computed."""
+    return (
+        "The section is not doubly symmetric; the compression figure leaves out flexural-torsional buckling and the "
+        "eccentricity of its connection."
+    )
+
+
+def centroid_shift(shift: str) -> str:
+    """One-sided loss moves the centroid."""
+    return f"Loss on one side moves the centroid by {shift}; the compression figure leaves that eccentricity out."
+
+
+def bowed(offset: str) -> str:
+    """A recorded bow."""
+    return f"A bow of {offset} is recorded; the compression figure leaves it out."
+
+
+def half_through(k: float) -> str:
+    """A top chord that nothing braces overhead."""
+    return (
+        f"The top chord is held sideways only by its verticals and floor beams: K out of plane {significant(k)} is "
+        "assumed, and the lateral stability of the chord is not rated."
+    )
+
+
+def smaller_k(given: float) -> str:
+    """The site gives a smaller K than a half-through chord may have."""
+    what = f"K {significant(given)} out of plane"
+    return f"The site gives {what} for a top chord that nothing braces overhead; it is not used."
+
+
+def loaded_between_joints(bar: str) -> str:
+    """The deck rests on the chord."""
+    return f"The deck rests on {bar} between its joints; the bending that this gives is left out."
+
+
+def very_slender(ratio: float, limit: int) -> str:
+    """KL/r above the usual limit."""
+    return f"KL/r is {significant(ratio)}, above {limit} (AASHTO LRFD 6.9.3, from memory)."
+
+
+def uplift(joint: str, force: str, load: str | None) -> str:
+    """A support that would lift."""
+    cause = f" under {load}" if load else ""
+    return f"The least factored reaction at {joint} is {force}{cause}: the bearing would lift unless it is held down."
+
+
+def large_displacement(size: str, span: str) -> str:
+    """Small-displacement statics is out of its depth."""
+    limit = f"a fiftieth of the {span} span"
+    return f"Under dead load and a full crowd a joint moves {size}, more than {limit}; check the model."
+
+
+def not_used(key: str, why: str) -> str:
+    """A key that is read and kept, but enters no figure."""
+    return f"`{key}` is read, not used: {why}"
+
+
+def double_bars(bars: tuple[str, ...]) -> str:
+    """Several bars join the same joints."""
+    return f"{listed(bars)} join the same joints; each is solved as a bar of its own."
+
+
+def slack_out(bar: str) -> str:
+    """A bar recorded as slack."""
+    return f"{bar} is slack; the truss is rated with it and without it, and the lower figures are shown."
+
+
+def no_state(number: int) -> str:
+    """Bars without a recorded state."""
+    verb = "has" if number == 1 else "have"
+    return f"{count(number, 'bar')} {verb} no state on record and {'counts' if number == 1 else 'count'} as fair."
+
+
+# --- hand check ---
+
+HAND_DIGITS: Final = 5
+"""Significant digits of a hand check: enough to work each line again from what is printed."""
+
+_LOOSE, _SUM, _PRODUCT, _POWER, _ATOM = range(5)
+_RANKS: Final = {"+": _SUM, "-": _SUM, "minus": _SUM, "*": _PRODUCT, "/": _PRODUCT, "^": _POWER}
+_RELATION_SIGNS: Final = {"<": "<", "<=": "≤", ">": ">", ">=": "≥"}
+
+_Leaf = Callable[[Traced], tuple[str, int]]
+
+
+def is_computed(step: Step) -> bool:
+    """Whether a line has a formula; one that was given stands for itself."""
+    return not (step.expression.operation == "symbol" and step.expression.symbol == step.symbol)
+
+
+def formula(step: Step) -> str:
+    """The right side of a line in symbols, as ``0.658^(Po/Pe) · Po``."""
+    return _tree(step.expression, _symbol)[0]
+
+
+def numbers(step: Step, figures: Figures) -> str:
+    """The same with the numbers put in, each with its unit."""
+
+    def leaf(node: Traced) -> tuple[str, int]:
+        return _number(node, figures)
+
+    return _tree(step.expression, leaf)[0]
+
+
+def value(step: Step, figures: Figures) -> str:
+    """The result of a line with its unit."""
+    return _plain(step.value, step.kind, figures)
+
+
+def reasons(step: Step, figures: Figures) -> tuple[str, ...]:
+    """Why a formula was taken where there is a choice, as ``Pe/Po = 0.62 ≥ 0.44``."""
+    return tuple(_reason(node, figures) for node in _walk(step.expression) if node.because)
+
+
+def _reason(node: Traced, figures: Figures) -> str:
+    if node.because is None:
+        return ""
+    sides = []
+    for side in (node.because[0], node.because[2]):
+        name, put_in = _tree(side, _symbol)[0], _plain(side.value, side.kind, figures)
+        sides.append((name, put_in))
+    (left, left_value), (right, right_value) = sides
+    first = left_value if left == left_value else f"{left} = {left_value}"
+    second = right_value if right == right_value else f"{right} = {right_value}"
+    return f"{first} {_RELATION_SIGNS[node.because[1]]} {second}"
+
+
+def _walk(node: Traced) -> Iterator[Traced]:
+    yield node
+    for operand in node.operands:
+        yield from _walk(operand)
+
+
+def _plain(number: float, kind: Kind, figures: Figures) -> str:
+    unit = figures.unit(kind)
+    digits = significant(figures.scaled(number, kind), HAND_DIGITS)
+    if "." in digits:
+        digits = digits.rstrip("0").rstrip(".")
+    return f"{digits} {unit}".rstrip().replace("-", "−")
+
+
+def _symbol(node: Traced) -> tuple[str, int]:
+    if node.operation == "symbol":
+        return node.symbol, _ATOM if node.symbol.isalnum() else _PRODUCT
+    if node.value == math.pi:
+        return "π", _ATOM
+    return _plain(node.value, "factor", Figures()), _ATOM if node.value >= 0 else _LOOSE
+
+
+def _number(node: Traced, figures: Figures) -> tuple[str, int]:
+    text = _plain(node.value, node.kind if node.operation == "symbol" else "factor", figures)
+    if node.value < 0:
+        return text, _LOOSE
+    return text, _PRODUCT if " " in text else _ATOM
+
+
+def _tree(node: Traced, leaf: _Leaf) -> tuple[str, int]:
+    """A tree as text, with how loosely it holds together."""
+    if node.operation in ("symbol", "number"):
+        return leaf(node)
+    parts = [_tree(operand, leaf) for operand in node.operands]
+    if node.operation == "root":
+        return f"√({parts[0][0]})", _ATOM
+    if node.operation in ("least", "greatest"):
+        return f"{node.operation} of ({'; '.join(text for text, _ in parts)})", _ATOM
+    rank = _RANKS[node.operation]
+    if node.operation == "minus":
+        return f"−{_held(parts[0], _PRODUCT)}", _LOOSE
+    left, right = parts
+    if node.operation == "^":
+        return f"{_held(left, _ATOM)}^{_held(right, _ATOM)}", rank
+    if node.operation == "/":
+        return f"{_held(left, _POWER)}/{_held(right, _POWER)}", rank
+    if node.operation == "*":
+        return f"{_held(left, _PRODUCT)} · {_held(right, _PRODUCT)}", rank
+    sign = {"+": "+", "-": "−"}[node.operation]
+    return f"{_held(left, _SUM)} {sign} {_held(right, _PRODUCT)}", rank
+
+
+def _held(part: tuple[str, int], rank: int) -> str:
+    """A part in parentheses where it would fall apart beside a stronger sign."""
+    return part[0] if part[1] >= rank else f"({part[0]})"
+
+
+# --- condition ---
+
+
+def plate_place(plate: str, station: float) -> str:
+    """Where a reading was taken."""
+    return f"the {plate} at {station:.2f}"
+
+
+def _reading(figures: Figures, reading: float, plate: str, station: float) -> str:
+    return f"Reading {figures.text(reading, 'size')} on {plate_place(plate, station)}"
+
+
+def reading_too_thick(figures: Figures, reading: float, nominal: float, plate: str, station: float) -> str:
+    """A reading above what the drawing has."""
+    check = " Check the unit and the bar." if reading > 10 * nominal else ""
+    built = figures.text(nominal, "size")
+    return (
+        f"{_reading(figures, reading, plate, station)} is thicker than the {built} as built; "
+        f"it counts as {built} and replaces nothing.{check}"
+    )
+
+
+def values_set_aside(figures: Figures, aside: list[float], used: float, plate: str, station: float) -> str:
+    """Some values of a reading lie far above what the drawing has, and the others do not."""
+    verb = "is" if len(aside) == 1 else "are"
+    return (
+        f"Of the values on {plate_place(plate, station)}, {listed([figures.text(one, 'size') for one in aside])} {verb} "
+        f"thicker than as built and set aside; {figures.text(used, 'size')} counts where it is less than what is known."
+    )
+
+
+def reading_grew(figures: Figures, reading: float, before: float, plate: str, station: float) -> str:
+    """A reading above the last sound one, with no repair on record."""
+    return (
+        f"{_reading(figures, reading, plate, station)} is more than the "
+        f"{figures.text(before, 'size')} read there before, and no repair is on record; it replaces nothing. "
+        "Measure again, or take the earlier reading back if that was wrong."
+    )
+
+
+def reading_dropped(figures: Figures, reading: float, before: float, plate: str, station: float) -> str:
+    """A reading below the last sound one by more than the error."""
+    return (
+        f"{_reading(figures, reading, plate, station)} is "
+        f"{figures.text(before - reading, 'size')} less than the {figures.text(before, 'size')} read there before; "
+        "it counts. Measure again."
+    )
+
+
+def reading_very_thin(figures: Figures, reading: float, plate: str, station: float) -> str:
+    """A reading that looks like what is lost, or that a gauge can hardly take."""
+    return (
+        f"{_reading(figures, reading, plate, station)} is very thin; it counts. "
+        "Check that it is what is left, not what is lost, and that the gauge can read it."
+    )
+
+
+def hole(plate: str, station: float) -> str:
+    """A zero reading."""
+    return f"A hole is recorded in {plate_place(plate, station)}; that plate counts as gone there."
+
+
+def negative_thickness(figures: Figures, reading: float, plate: str, station: float) -> str:
+    """A thickness below zero."""
+    return (
+        f"A thickness of {figures.text(reading, 'size')} is recorded on {plate_place(plate, station)}; "
+        "it counts for nothing until it is put right."
+    )
+
+
+def station_outside(station: float, used: float) -> str:
+    """A place beyond the bar's ends."""
+    return f"Station {significant(station)} lies beyond the bar's ends; what is recorded there is taken at {used:.0f}."
+
+
+def extent_not_a_length(figures: Figures, extent: float) -> str:
+    """An extent of zero or less."""
+    return f"An extent of {figures.text(extent, 'length')} is recorded; it counts as an extent that is not known."
+
+
+def plate_not_there(plate: str, section: str) -> str:
+    """A reading on a plate that the bar's section does not have."""
+    return f"A reading on the {plate} counts for nothing: section {section} has no such plate."
+
+
+def loss_outside(loss: float) -> str:
+    """An estimated loss that is no fraction."""
+    return (
+        f"An estimated loss of {significant(100 * loss)} % is recorded; it counts for nothing until it is put right. "
+        "A loss lies between 0 and 100 %."
+    )
+
+
+def error_assumed(figures: Figures, error: float) -> str:
+    """Readings were compared without a known error."""
+    return (
+        f"The instrument's error is not given; readings are compared as if it were {figures.text(error, 'size', 2)} "
+        "(common practice, no source)."
+    )
+
+
+def two_answers(about: str, answers: list[str], date: str) -> str:
+    """Devices disagree within a visit."""
+    number = "Two" if len(answers) == 2 else str(len(answers))
+    return (
+        f"{number} answers about {about} in the visit of {date}: {listed(answers)}. "
+        "The one that gives the lower resistance counts until an entry chooses."
+    )
+
+
+def bow_very_large(figures: Figures, offset: float, over: float) -> str:
+    """A bow beyond a fiftieth of the length that it is measured over."""
+    return (
+        f"A bow of {figures.text(offset, 'size')} over {figures.text(over, 'length')} is more than a fiftieth of that "
+        "length. Measure again."
+    )
+
+
+def bow_both_ways(figures: Figures, offset: float) -> str:
+    """Bows in more than one direction are on record."""
+    return f"Bows in two directions are recorded; the larger, {figures.text(offset, 'size')}, counts."
+
+
+def replacement_not_there(what: str, name: str, date: str) -> str:
+    """A replacement by a section or a material that the bridge does not have."""
+    return (
+        f"The visit of {date} replaces the bar by {what} {name}, which this bridge does not have; the replacement "
+        "is set aside and what was recorded before still counts."
+    )
+
+
+def not_seen(date: str, reason: str | None, known_from: str | None, loss: float | None) -> str:
+    """A bar that the last visit did not see, and what it is rated by."""
+    because = f" ({reason})" if reason else ""
+    known = "it is taken as built" if known_from is None else f"what was recorded up to {known_from} is used"
+    if loss is not None:
+        known = f"a loss of {percent(loss)} over the whole bar is taken, or what is known where that is less steel"
+    return f"Not seen in the visit of {date}{because}; {known}."
+
+
+def never_visited(loss: float | None) -> str:
+    """A journal without visits."""
+    taken = "as built" if loss is None else f"with a loss of {percent(loss)}"
+    return f"No visit is on record; no bar counts as seen and every bar is taken {taken}."
+
+
+def bar_not_there(truss: str, bar: str) -> str:
+    """Entries about a bar that the bridge does not have."""
+    return f"Entries about {bar} of truss {truss} count for nothing: this bridge has no such bar."
+
+
+def retracts_nothing(identity: str) -> str:
+    """A retraction that leads nowhere."""
+    return f"An entry takes back `{identity}`, which is not on record before it; nothing is taken back."
+
+
+def chooses_nothing(identity: str) -> str:
+    """A choice that leads nowhere."""
+    return f"An entry chooses `{identity}`, which does not stand on record; nothing is chosen."

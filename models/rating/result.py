@@ -9,6 +9,7 @@ from typing import Literal
 from models.finding import Finding
 from models.statics.stability import Verdict
 
+
 @dataclass(frozen=True, slots=True)
 class Effect:
     """The largest tension and the largest compression (negative) that a load gives, N, unfactored."""

@@ -1,0 +1,98 @@
+"""Forces of one truss in one state of its bars: dead load, every live load at its worst, reactions."""
+
+from __future__ import annotations
+
+from dataclasses import dataclass
+
+import numpy as np
+from numpy.typing import NDArray
+
+from models.calculation import Array
+from models.loading.dead import bar_weights, own_weight_on_joints
+from models.rating.fitted import Stock
+from models.rating.prepare import PreparedTruss, Standing
+from models.statics.response import Response
+
+
+@dataclass(frozen=True, eq=False)
+class Answer:
+    """What a truss that stands does under its loads.
+
+    Numbers count the bars that are in (m of them); forces are unfactored, N, tension positive.
+
+    Parameters
+    ----------
+    dead : (2, m) components and wearing.
+    ordinates : (m, d) influence ordinates at the deck joints.
+    loads : names, in order. live : (loads, 2, m) largest tension, and largest compression (negative).
+    supports : joints. support_dead : (2, s). support_live : (loads, s) the least (most lifting) reaction.
+    displacement : the largest under dead load and a full crowd, m.
+    """
+
+    standing: Standing
+    response: Response
+    dead: Array
+    ordinates: Array
+    loads: tuple[str, ...]
+    live: Array
+    supports: NDArray[np.int64]
+    support_dead: Array
+    support_live: Array
+    displacement: float
+
+
+def joint_dead_load(prepared: PreparedTruss, stock: Stock) -> Array:
+    """(2, j) downward dead load on each joint, components and wearing, N."""
+    weights = bar_weights(stock.area, stock.density, prepared.geometry.lengths, prepared.allowance)
+    own = own_weight_on_joints(prepared.geometry, weights)
+    return prepared.deck_load + np.array([own, np.zeros_like(own)])
+
+
+def solve(prepared: PreparedTruss, standing: Standing, stock: Stock, flexibility: Array) -> Answer:
+    """Forces of a truss that stands.
+
+    Parameters
+    ----------
+    flexibility : (all bars,) elongation under unit tension, m/N.
+    """
+    response = standing.respond(flexibility)
+    down = -response.forces[:, 1::2]
+    joint_load = joint_dead_load(prepared, stock)
+    dead = _without_noise(joint_load @ down.T, joint_load @ np.abs(down).T, response.noise)
+    ordinates = down[:, prepared.geometry.deck]
+    ordinates = _without_noise(ordinates, np.abs(ordinates).max(initial=0.0), response.noise)
+    supports = np.flatnonzero(standing.geometry.held[1::2])
+    lift = -response.reactions[1::2, 1::2][supports]
+    loads = tuple(name for name, pattern in prepared.patterns.items() if pattern is not None)
+    rows = np.concatenate([ordinates, lift[:, prepared.geometry.deck]])
+    found = np.array([pattern.extremes(rows) for pattern in prepared.patterns.values() if pattern is not None])
+    found = found.reshape(len(loads), 2, len(rows))
+    bars = len(ordinates)
+    return Answer(
+        standing=standing,
+        response=response,
+        dead=dead,
+        ordinates=ordinates,
+        loads=loads,
+        live=found[:, :, :bars],
+        supports=supports,
+        support_dead=joint_load @ lift.T,
+        support_live=found[:, 1, bars:],
+        displacement=_displacement(prepared, response, joint_load.sum(axis=0), flexibility[standing.kept]),
+    )
+
+
+def _without_noise(force: Array, size: Array | float, noise: float) -> Array:
+    """Forces that are nothing but rounding error become zero, so that no rating factor rests on them."""
+    return np.where(np.abs(force) <= noise * size, 0.0, force)
+
+
+def _displacement(prepared: PreparedTruss, response: Response, dead: Array, flexibility: Array) -> float:
+    """Largest elastic displacement of a joint under dead load and a crowd on the whole deck, m (virtual work)."""
+    down = dead.copy()
+    crowds = [pattern.hurts for pattern in prepared.patterns.values() if hasattr(pattern, "hurts")]
+    down[prepared.geometry.deck] += max(crowds, default=0.0) * prepared.tributary
+    forces = -response.forces[:, 1::2] @ down
+    finite = np.where(np.isfinite(flexibility), flexibility, 0.0)
+    movement = (response.forces.T @ (finite * forces)).reshape(-1, 2)
+    return float(np.hypot(*movement.T).max(initial=0.0))

@@ -1,0 +1,190 @@
+"""What a reader of the rating has to know, bar by bar and for the whole truss."""
+
+from __future__ import annotations
+
+from collections import defaultdict
+from collections.abc import Callable, Iterator
+from typing import Final
+
+import numpy as np
+
+from models import words
+from models.bridge import Bar, Footbridge
+from models.finding import Finding, Level
+from models.rating.outcome import Outcome
+from models.rating.prepare import HALF_THROUGH_K, PreparedTruss, held_by_frames
+from models.rating.result import Reaction
+from models.rating.strength import member_of
+from models.resistance.columns import elastic_critical_load
+from models.section import centroid_shift, doubly_symmetric, slender
+from models.words import Figures
+
+_LARGE_DISPLACEMENT: Final = 1 / 50
+_MOST_SLENDER: Final = {"bracing": 140}
+_MOST_SLENDER_MAIN: Final = 120
+_NOTICEABLE_SHIFT: Final = 1e-6
+"""Parts of the bar's length; less is rounding."""
+
+
+def by_bar(bridge: Footbridge, outcome: Outcome) -> dict[str, tuple[Finding, ...]]:
+    """The findings of each bar of a truss, what was recorded first, then what the figures say."""
+    found: dict[str, list[Finding]] = defaultdict(list)
+    for now in outcome.conditions:
+        found[now.bar].extend(now.findings)
+    figures = Figures(bridge.units or "SI")
+    for part in (_gone, _dead_alone, _pushed, _compression_leaves_out, _frames, _deck_on_chord, _slenderness):
+        for number, level, text in part(outcome, figures, bridge):
+            bar = outcome.prepared.truss.bars[number].id
+            found[bar].append(Finding(level, text, outcome.name, bar))
+    return {bar: tuple(findings) for bar, findings in found.items()}
+
+
+_Found = Iterator[tuple[int, Level, str]]
+_Part = Callable[[Outcome, Figures, Footbridge], _Found]
+
+
+def _bar(outcome: Outcome, number: int) -> Bar:
+    return outcome.prepared.truss.bars[number]
+
+
+def _gone(outcome: Outcome, figures: Figures, bridge: Footbridge) -> _Found:
+    for number in sorted(outcome.severed):
+        told = outcome.conditions[number].severed
+        name = _bar(outcome, number).id
+        yield number, "act now", words.severed(name) if told else words.no_steel_left(name)
+    for number, now in enumerate(outcome.conditions):
+        if number in outcome.cracked:
+            yield number, "act now", words.cracked_out(now.bar)
+        elif now.crack is not None and number not in outcome.severed:
+            yield number, "left out", words.cracked_in(now.bar)
+    for number in sorted(outcome.slack):
+        yield number, "note", words.slack_out(_bar(outcome, number).id)
+
+
+def _dead_alone(outcome: Outcome, figures: Figures, bridge: Footbridge) -> _Found:
+    if outcome.solved is None:
+        return
+    found, capacity = outcome.solved.figures, outcome.task.capacity[-1]
+    for number in np.flatnonzero(found.dead_exceeds.any(axis=0)).tolist():
+        direction = int(found.direction[number])
+        excess = float(found.demand[direction, number] - capacity[direction, number])
+        name = ("tension", "compression")[direction]
+        yield number, "act now", words.dead_exceeds(_bar(outcome, number).id, name, figures.text(excess, "force"))
+
+
+def _pushed(outcome: Outcome, figures: Figures, bridge: Footbridge) -> _Found:
+    if outcome.solved is None or not any(bar.tension_only for bar in outcome.prepared.truss.bars):
+        return
+    for number, bar in enumerate(outcome.prepared.truss.bars):
+        if bar.tension_only and outcome.solved.figures.demand[1, number] > 0:
+            yield number, "left out", words.pushed(bar.id)
+
+
+def _compression_leaves_out(outcome: Outcome, figures: Figures, bridge: Footbridge) -> _Found:
+    """Slender plates, sections that are not doubly symmetric, centroid shift and bow."""
+    stock, pieces = outcome.task.stock, outcome.task.strength.pieces
+    thin = slender(pieces.stack, pieces.thickness, stock.E[pieces.owner], stock.Fy[pieces.owner])
+    for number in np.unique(pieces.owner[thin.any(axis=1)]).tolist():
+        names = stock.fitted[number].built.plates
+        which = thin[pieces.owner == number].any(axis=0)[: len(names)]
+        plates = tuple(name for name, is_thin in zip(names, which, strict=True) if is_thin)
+        yield number, "left out", words.slender_plate(plates)
+    for number, fitted in enumerate(stock.fitted):
+        if not doubly_symmetric(fitted.built):
+            yield number, "left out", words.not_doubly_symmetric()
+    shift = centroid_shift(pieces.stack, pieces.thickness)
+    length = outcome.prepared.geometry.lengths
+    for number in np.unique(pieces.owner[shift > _NOTICEABLE_SHIFT * length[pieces.owner]]).tolist():
+        largest = float(shift[pieces.owner == number].max())
+        yield number, "left out", words.centroid_shift(figures.text(largest, "size", 2))
+    for number, now in enumerate(outcome.conditions):
+        if now.bow is not None:
+            yield number, "left out", words.bowed(figures.text(now.bow.offset.si, "size"))
+
+
+def _frames(outcome: Outcome, figures: Figures, bridge: Footbridge) -> _Found:
+    for number, bar in enumerate(outcome.prepared.truss.bars):
+        if not held_by_frames(outcome.prepared.truss, bar):
+            continue
+        given = bar.k_out_of_plane
+        yield number, "left out", words.half_through(max(HALF_THROUGH_K, given or 0.0))
+        if given is not None and given < HALF_THROUGH_K:
+            yield number, "note", words.smaller_k(given)
+
+
+def _deck_on_chord(outcome: Outcome, figures: Figures, bridge: Footbridge) -> _Found:
+    if bridge.deck.rests_on != "chord":
+        return
+    geometry = outcome.prepared.geometry
+    panels = {frozenset(pair) for pair in zip(geometry.deck[:-1].tolist(), geometry.deck[1:].tolist(), strict=True)}
+    for number, ends in enumerate(geometry.ends.tolist()):
+        if frozenset(ends) in panels:
+            yield number, "left out", words.loaded_between_joints(_bar(outcome, number).id)
+
+
+def _slenderness(outcome: Outcome, figures: Figures, bridge: Footbridge) -> _Found:
+    stock, strength = outcome.task.stock, outcome.task.strength
+    lengths = outcome.prepared.effective_lengths
+    member = member_of(stock, strength.pieces.owner, strength.section, lengths)
+    load = np.maximum(elastic_critical_load(member), np.finfo(float).tiny)
+    ratio = np.pi * np.sqrt(member.E * member.area / load)
+    ratio[member.area <= 0] = 0.0
+    for number in np.unique(strength.pieces.owner[ratio > _MOST_SLENDER_MAIN]).tolist():
+        bar = _bar(outcome, number)
+        limit = _MOST_SLENDER.get(bar.role, _MOST_SLENDER_MAIN)
+        largest = float(ratio[strength.pieces.owner == number].max())
+        if largest > limit and not bar.tension_only:
+            yield number, "note", words.very_slender(largest, limit)
+
+
+def of_truss(bridge: Footbridge, outcome: Outcome, reactions: tuple[Reaction, ...]) -> Iterator[Finding]:
+    """Findings about a truss as a whole."""
+    figures = Figures(bridge.units or "SI")
+    stability, geometry = outcome.standing.stability, outcome.standing.geometry
+    if not stability.carries:
+        joints = tuple(name for name, moves in zip(geometry.joints, stability.moving, strict=True) if moves)
+        bars = tuple(name for name, loose in zip(geometry.bars, stability.loose, strict=True) if loose)
+        nearly = stability.verdict == "nearly a mechanism"
+        yield Finding("act now", words.mechanism(outcome.name, joints, bars, nearly=nearly), outcome.name)
+    for reaction in reactions:
+        if reaction.least < 0:
+            text = words.uplift(reaction.joint, figures.text(reaction.least, "force"), reaction.load)
+            yield Finding("note", text, outcome.name)
+    span = geometry.span
+    if outcome.solved is not None and outcome.solved.answer.displacement > span * _LARGE_DISPLACEMENT:
+        size = figures.text(outcome.solved.answer.displacement, "size")
+        text = words.large_displacement(size, figures.text(span, "length"))
+        yield Finding("doubtful", text, outcome.name)
+    yield from _double_bars(outcome.prepared)
+
+
+def _double_bars(prepared: PreparedTruss) -> Iterator[Finding]:
+    joined: dict[frozenset[str], list[str]] = defaultdict(list)
+    for bar in prepared.truss.bars:
+        joined[frozenset((bar.start, bar.end))].append(bar.id)
+    for bars in joined.values():
+        if len(bars) > 1:
+            yield Finding("note", words.double_bars(tuple(bars)), prepared.truss.name)
+
+
+def of_bridge(bridge: Footbridge) -> Iterator[Finding]:
+    """Keys that are read and kept, but that no figure uses yet, and what the site does not say."""
+    for load in bridge.rating.live:
+        if load.rule is not None:
+            why = f"the pressure of `{load.name}` by rule is not computed; give a pressure, or rate by hand."
+            yield Finding("not used", words.not_used(f"rating/live/{load.name}/rule", why))
+    if bridge.rating.imposed:
+        why = "settlement, temperature and bars made short enter no figure."
+        yield Finding("not used", words.not_used("rating/imposed", why))
+    if bridge.half_through is not None:
+        why = "the lateral stability of the top chord is not rated."
+        yield Finding("not used", words.not_used("half through", why))
+    if bridge.overrides:
+        why = "overrides are printed in the report and change no figure."
+        yield Finding("not used", words.not_used("overrides", why))
+    if bridge.deck.wearing is None:
+        yield Finding("assumed", "The site gives no wearing course; its weight is taken as 0.")
+    stitched = [bar.id for truss in bridge.trusses.values() for bar in truss.bars if bar.stitch_spacing is not None]
+    if stitched:
+        why = "buckling of the pieces of built-up bars between their stitches is not computed."
+        yield Finding("not used", words.not_used("stitch spacing", why))

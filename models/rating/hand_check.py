@@ -1,0 +1,161 @@
+"""The hand check of one bar: the very code that rates a truss, run over traced numbers.
+
+Each line carries its formula, its numbers, its unit and its clause, so that a reviewer can redo a bar on paper.
+"""
+
+from __future__ import annotations
+
+import math
+from collections.abc import Iterable
+from dataclasses import dataclass
+
+from models.calculation import HandCheck, Number, Sheet, Step, greatest
+from models.rating.outcome import Outcome
+from models.resistance.protocol import DeadFactors, Level, Member
+from models.section import write_section
+
+
+@dataclass(frozen=True)
+class BarCheck:
+    """A bar's calculation.
+
+    Parameters
+    ----------
+    steps : in the order in which a person would write them.
+    remark : why there is no rating factor at the end, or what it leaves out; empty otherwise.
+    """
+
+    truss: str
+    bar: str
+    steps: tuple[Step, ...]
+    remark: str = ""
+
+
+def hand_check(outcomes: Iterable[Outcome], truss: str, bar: str) -> BarCheck:
+    """Work one bar out again, line by line.
+
+    Parameters
+    ----------
+    outcomes : as solved for the rating.
+
+    Raises
+    ------
+    KeyError
+        If there is no such truss or bar.
+    """
+    outcome = next((each for each in outcomes if each.name == truss), None)
+    if outcome is None:
+        raise KeyError(truss)
+    number = [each.id for each in outcome.prepared.truss.bars].index(bar) if bar in outcome.prepared.truss.bar else -1
+    if number < 0:
+        raise KeyError(bar)
+    return _check(outcome, number)
+
+
+def _check(outcome: Outcome, number: int) -> BarCheck:
+    bar = outcome.prepared.truss.bars[number]
+    sheet = HandCheck()
+    direction = _direction(outcome, number)
+    piece = int(outcome.task.strength.piece[direction][number])
+    basis = outcome.task.basis
+    member = _member(outcome, number, piece, sheet)
+    level = basis.resistances(member, sheet)[-1]
+    resistance = (level.tension, level.flexural_buckling)[direction]
+    if number in outcome.severed or number in outcome.cracked:
+        what = "severed" if number in outcome.severed else "cracked and pulled"
+        return BarCheck(outcome.name, bar.id, tuple(sheet.steps), f"The bar is {what}: it gets no credit.")
+    if outcome.solved is None:
+        return BarCheck(outcome.name, bar.id, tuple(sheet.steps), "The truss is a mechanism: there are no forces.")
+    remark = _write_factor(outcome, number, direction, resistance, sheet)
+    return BarCheck(outcome.name, bar.id, tuple(sheet.steps), remark)
+
+
+def _direction(outcome: Outcome, number: int) -> int:
+    """The direction that governs; where none does, the one in which dead load acts."""
+    if outcome.solved is None:
+        return 0
+    governs = int(outcome.solved.figures.direction[number])
+    if governs >= 0 and outcome.solved.figures.lowest[-1, number] < float("inf"):
+        return governs
+    return int(outcome.solved.figures.dead[:, number].sum() < 0)
+
+
+def _member(outcome: Outcome, number: int, piece: int, sheet: Sheet) -> Member:
+    """The bar's numbers as lines, from its plates at the governing place to its effective lengths."""
+    stock, pieces = outcome.task.stock, outcome.task.strength.pieces
+    fitted = stock.fitted[number]
+    thickness = pieces.thickness[piece][: len(fitted.built.plates)]
+    section = write_section(fitted.built, thickness, sheet)
+    lengths = outcome.prepared.effective_lengths[:, number]
+    return Member(
+        E=sheet.given("E", fitted.E, "stress", "modulus of elasticity"),
+        Fy=sheet.given("Fy", fitted.Fy, "stress", "yield strength"),
+        Fu=sheet.given("Fu", fitted.Fu, "stress", "tensile strength"),
+        area=section.area,
+        inertia_horizontal=section.inertia_horizontal,
+        inertia_vertical=section.inertia_vertical,
+        inertia_product=section.inertia_product,
+        effective_length_in_plane=sheet.given(
+            "Li", lengths[0], "length", "effective length in the plane of the truss, K L"
+        ),
+        effective_length_out_of_plane=sheet.given("Lo", lengths[1], "length", "effective length out of plane, K L"),
+        net_area=sheet.given("An/A", fitted.net_area, "ratio", "net over gross area"),
+        shear_lag=sheet.given("U", fitted.shear_lag, "ratio", "shear lag factor"),
+    )
+
+
+def _write_factor(outcome: Outcome, number: int, direction: int, resistance: Number, sheet: Sheet) -> str:
+    """Capacity, factored dead load and rating factors; returns a remark where there is no factor."""
+    solved, basis = outcome.solved, outcome.task.basis
+    if solved is None:
+        return ""
+    figures, sign = solved.figures, (1.0, -1.0)[direction]
+    name = ("tension", "compression")[direction]
+    capacity = _write_capacity(outcome, number, direction, resistance, sheet)
+    components = sheet.given("DC", sign * figures.dead[0, number], "force", f"dead load of components, as {name}")
+    wearing = sheet.given("DW", sign * figures.dead[1, number], "force", f"wearing course, as {name}")
+    gdc = _dead_factor(sheet, "gDC", basis.components, components)
+    gdw = _dead_factor(sheet, "gDW", basis.wearing, wearing)
+    load = int(figures.load[number])
+    if load < 0:
+        sheet.note("margin", capacity - gdc * components - gdw * wearing, "force", "capacity less factored dead load")
+        exceeded = bool(figures.dead_exceeds[:, number].any())
+        return (
+            "Dead load alone exceeds the capacity: rating factor 0."
+            if exceeded
+            else "No live load acts on this bar that way."
+        )
+    live_name = solved.answer.loads[load]
+    size = max(sign * float(figures.live[load, direction, number]), 0.0)
+    live = sheet.given("LL", size, "force", f"{live_name} at its worst, as {name}")
+    for level in basis.levels:
+        _write_level(sheet, level, capacity, gdc * components + gdw * wearing, live)
+    return ""
+
+
+def _dead_factor(sheet: Sheet, symbol: str, factors: DeadFactors, effect: Number) -> Number:
+    acts = float(effect) > 0
+    what = "load factor where dead load acts" if acts else "load factor where dead load relieves"
+    return sheet.given(symbol, factors.greatest if acts else factors.least, "ratio", what, factors.source)
+
+
+def _write_level(sheet: Sheet, level: Level, capacity: Number, dead: Number, live: Number) -> None:
+    gamma = sheet.given(f"gLL {level.name}", level.live, "ratio", f"live load factor, {level.name}", level.source)
+    factor = (capacity - dead) / (gamma * live)
+    sheet.note(f"RF {level.name}", greatest(factor, 0.0), "ratio", f"rating factor, {level.name}", level.rule)
+
+
+def _write_capacity(outcome: Outcome, number: int, direction: int, resistance: Number, sheet: Sheet) -> Number:
+    """Resistance times condition and system factor, where the basis has them."""
+    condition = float(outcome.condition_factor[direction, number])
+    system = float(outcome.system_factor[number])
+    if math.isnan(condition):
+        return sheet.note("C", resistance * 1.0, "force", "capacity")
+    state = outcome.conditions[number].state
+    told = f"condition factor, state {state}" if state else "condition factor, no state on record: as fair"
+    phi_c = sheet.given("phi_c", condition, "ratio", told)
+    phi_s = sheet.given("phi_s", system, "ratio", "system factor")
+    combined = sheet.note(
+        "phi_c phi_s", outcome.task.basis.combined_factor(phi_c, phi_s), "ratio", "their product, 0.85 at least"
+    )
+    return sheet.note("C", combined * resistance, "force", "capacity")

@@ -1,0 +1,52 @@
+"""The loads and factors of a rating as lines that a reviewer can check, each with its source."""
+
+from __future__ import annotations
+
+from collections.abc import Iterator
+
+from models.bridge import Footbridge, LiveLoad
+from models.loading.live import VEHICLES
+from models.quantity import Quantity
+from models.rating.prepare import ASSUMED_CONNECTION_ALLOWANCE
+from models.rating.result import FactorLine
+from models.resistance.protocol import Basis
+
+_SITE = "site file"
+
+
+def load_lines(bridge: Footbridge, basis: Basis) -> tuple[FactorLine, ...]:
+    """Dead loads, live loads and the factors of the basis."""
+    return (*_dead(bridge), *(_live(load) for load in bridge.rating.live), *basis.factor_lines())
+
+
+def _dead(bridge: Footbridge) -> Iterator[FactorLine]:
+    deck, allowance = bridge.deck, bridge.rating.connection_allowance
+    given = allowance is not None
+    yield FactorLine(
+        "own weight of bars, times",
+        f"{allowance if given else ASSUMED_CONNECTION_ALLOWANCE}",
+        _SITE if given else "assumed (common practice, no source)",
+    )
+    yield FactorLine("deck, dead", f"{deck.dead.text} on {(deck.dead_width or deck.width).text}", _SITE)
+    yield FactorLine("wearing course", deck.wearing.text if deck.wearing else "none", _SITE)
+    if isinstance(deck.edge, Quantity):
+        yield FactorLine("edge, each truss", deck.edge.text, _SITE)
+    elif deck.edge:
+        for truss, load in deck.edge.items():
+            yield FactorLine(f"edge, {truss}", load.text, _SITE)
+
+
+def _live(load: LiveLoad) -> FactorLine:
+    what = f"{load.name} ({load.kind})"
+    companions = "".join(f", with {companion.factor} x {companion.load}" for companion in load.companions or ())
+    if load.vehicle is not None:
+        vehicle = VEHICLES[load.vehicle]
+        axles = ", ".join(f"{weight} at {position}" for position, weight in vehicle.axles)
+        return FactorLine(what, f"{axles}; track {vehicle.track}{companions}", vehicle.source)
+    if load.axles is not None:
+        axles = ", ".join(f"{axle.weight.text} at {axle.position.text}" for axle in load.axles)
+        return FactorLine(what, f"{axles}; track {load.track.text if load.track else 'none'}{companions}", _SITE)
+    if load.rule is not None:
+        return FactorLine(what, f"by rule {load.rule}: not computed{companions}", _SITE)
+    size = load.pressure or load.force
+    return FactorLine(what, f"{size.text if size else 'none'}{companions}", _SITE)
