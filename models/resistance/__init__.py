@@ -1,1 +1,7 @@
-"""What a bar can carry, by published methods: one module a basis."""
+"""What a bar resists, on each rating basis."""
+
+from models.resistance.lrfr import LRFR
+from models.resistance.protocol import Basis, DeadFactors, Level, Member, Resistance
+from models.resistance.registry import BASES, NAMES, basis
+
+__all__ = ["BASES", "LRFR", "NAMES", "Basis", "DeadFactors", "Level", "Member", "Resistance", "basis"]

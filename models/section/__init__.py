@@ -1,1 +1,35 @@
-"""Sections as plates: nominal and remaining properties of every shape."""
+"""Sections as plates: shapes, nominal and remaining properties, slenderness.
+
+>>> stacked = stack([built(section) for section in sections])
+>>> left = properties(stacked, stacked.thickness * 0.9)
+"""
+
+from models.section.nominal import Built, built, depth_in_plane
+from models.section.plate import Plate
+from models.section.registry import SHAPES, faults, plate_names, shape_of
+from models.section.shape import Key, Option, Shape
+from models.section.sheet import write_section
+from models.section.slenderness import slender
+from models.section.stacked import Stack, centroid_shift, properties, stack
+from models.section.values import Properties
+
+__all__ = [
+    "SHAPES",
+    "Built",
+    "Key",
+    "Option",
+    "Plate",
+    "Properties",
+    "Shape",
+    "Stack",
+    "built",
+    "centroid_shift",
+    "depth_in_plane",
+    "faults",
+    "plate_names",
+    "properties",
+    "shape_of",
+    "slender",
+    "stack",
+    "write_section",
+]

@@ -1,0 +1,62 @@
+"""Columns: the elastic critical load that all bases share, and the curves over it.
+
+Every formula takes floats, arrays or the numbers of a hand check (`models.calculation`).
+"""
+
+from __future__ import annotations
+
+import math
+from typing import Final
+
+import numpy as np
+
+from models.calculation import Array, Number, Traced, choose, least, root
+from models.resistance.protocol import Member
+
+ELASTIC_BELOW: Final = 0.44
+"""Pe/Po below which a column buckles elastically (AASHTO LRFD 6.9.4.1.1, from memory)."""
+
+
+def elastic_critical_load(member: Member) -> Number:
+    """The load at which a pinned bar buckles elastically, about whichever axis it chooses, N.
+
+    The lesser eigenvalue of pi^2 E [[Ih/Li^2, Ihv/(Li Lo)], [Ihv/(Li Lo), Iv/Lo^2]] with effective lengths Li in
+    the plane of the truss and Lo out of it. Exact where Li = Lo or Ihv = 0; elsewhere a safe lower bound.
+    """
+    inside, outside = member.effective_length_in_plane, member.effective_length_out_of_plane
+    scale = math.pi**2 * member.E
+    in_plane = scale * member.inertia_horizontal / inside**2
+    out_of_plane = scale * member.inertia_vertical / outside**2
+    coupling = scale * member.inertia_product / (inside * outside)
+    if isinstance(coupling, Traced) and not coupling.value:
+        return least(in_plane, out_of_plane)
+    return (in_plane + out_of_plane) / 2 - root(((in_plane - out_of_plane) / 2) ** 2 + coupling**2)
+
+
+def column_strength(yield_load: Number, critical_load: Number) -> Number:
+    """Nominal resistance of a column without slender plates, N.
+
+    Parameters
+    ----------
+    yield_load : Po, yield strength times area, N. critical_load : Pe, elastic critical load, N.
+
+    References
+    ----------
+    AASHTO LRFD 6.9.4.1.1 (from memory); the same curve as AISC 360-22 E3, which was read.
+    """
+    inelastic = 0.658 ** _over(yield_load, critical_load) * yield_load
+    return choose(critical_load, ">=", ELASTIC_BELOW * yield_load, inelastic, 0.877 * critical_load)
+
+
+def slenderness(E: Array, area: Array, critical_load: Array) -> Array:
+    """KL/r (n,) of the axis about which each bar buckles; 0 where no area is left."""
+    load = np.maximum(critical_load, np.finfo(float).tiny)
+    found: Array = np.where(area > 0, math.pi * np.sqrt(E * area / load), 0.0)
+    return found
+
+
+def _over(number: Number, divisor: Number) -> Number:
+    """A quotient that is not used where the divisor is zero, and raises no warning there."""
+    if isinstance(divisor, Traced):
+        return number / divisor if divisor.value else number
+    return number / np.where(divisor > 0, divisor, 1.0)
