@@ -280,6 +280,8 @@ _LOOSE, _SUM, _PRODUCT, _POWER, _ATOM = range(5)
 _RANKS: Final = {"+": _SUM, "-": _SUM, "minus": _SUM, "*": _PRODUCT, "/": _PRODUCT, "^": _POWER}
 _RELATION_SIGNS: Final = {"<": "<", "<=": "≤", ">": ">", ">=": "≥"}
 
+_CONSTANTS: Final = {math.pi: "π", math.pi**2: "π²"}
+
 _Leaf = Callable[[Traced], tuple[str, int]]
 
 
@@ -342,8 +344,8 @@ def _plain(number: float, kind: Kind, figures: Figures) -> str:
 def _symbol(node: Traced) -> tuple[str, int]:
     if node.operation == "symbol":
         return node.symbol, _ATOM if node.symbol.isalnum() else _PRODUCT
-    if node.value == math.pi:
-        return "π", _ATOM
+    if node.value in _CONSTANTS:
+        return _CONSTANTS[node.value], _ATOM
     return _plain(node.value, "factor", Figures()), _ATOM if node.value >= 0 else _LOOSE
 
 
@@ -407,8 +409,9 @@ def reading_too_thick(figures: Figures, reading: float, nominal: float, plate: s
 def values_set_aside(figures: Figures, aside: list[float], used: float, plate: str, station: float) -> str:
     """Some values of a reading lie far above what the drawing has, and the others do not."""
     verb = "is" if len(aside) == 1 else "are"
+    thick = listed([figures.text(one, "size") for one in aside])
     return (
-        f"Of the values on {plate_place(plate, station)}, {listed([figures.text(one, 'size') for one in aside])} {verb} "
+        f"Of the values on {plate_place(plate, station)}, {thick} {verb} "
         f"thicker than as built and set aside; {figures.text(used, 'size')} counts where it is less than what is known."
     )
 

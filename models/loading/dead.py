@@ -34,7 +34,9 @@ def bar_weights(area: Array, density: Array, length: Array, allowance: float) ->
 def own_weight_on_joints(geometry: Geometry, weights: Array) -> Array:
     """(j,) downward force on each joint, N: half of each bar's weight to either end."""
     halves = np.repeat(weights / 2, 2)
-    return np.bincount(geometry.ends.ravel(), weights=halves, minlength=len(geometry.joints))
+    load: Array = np.zeros(len(geometry.joints))
+    np.add.at(load, geometry.ends.ravel(), halves)
+    return load
 
 
 def deck_on_joints(bridge: Footbridge, truss: str, geometry: Geometry) -> tuple[Array, Array]:

@@ -57,8 +57,7 @@ class Floor:
         return hurts, relieves
 
     def mean_share(self) -> float:
-        """The part of an even load over the whole width that this truss takes (negative impossible only
-        where the deck's middle lies beyond the other truss)."""
+        """The part of an even load over the whole width that this truss takes (lever rule)."""
         if self.spacing is None:
             return 1.0
         middle = self.width / 2 - self.near

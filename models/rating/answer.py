@@ -9,6 +9,7 @@ from numpy.typing import NDArray
 
 from models.calculation import Array
 from models.loading.dead import bar_weights, own_weight_on_joints
+from models.loading.live import Crowd
 from models.rating.fitted import Stock
 from models.rating.prepare import PreparedTruss, Standing
 from models.statics.response import Response
@@ -45,7 +46,8 @@ def joint_dead_load(prepared: PreparedTruss, stock: Stock) -> Array:
     """(2, j) downward dead load on each joint, components and wearing, N."""
     weights = bar_weights(stock.area, stock.density, prepared.geometry.lengths, prepared.allowance)
     own = own_weight_on_joints(prepared.geometry, weights)
-    return prepared.deck_load + np.array([own, np.zeros_like(own)])
+    load: Array = prepared.deck_load + np.array([own, np.zeros_like(own)])
+    return load
 
 
 def solve(prepared: PreparedTruss, standing: Standing, stock: Stock, flexibility: Array) -> Answer:
@@ -90,7 +92,7 @@ def _without_noise(force: Array, size: Array | float, noise: float) -> Array:
 def _displacement(prepared: PreparedTruss, response: Response, dead: Array, flexibility: Array) -> float:
     """Largest elastic displacement of a joint under dead load and a crowd on the whole deck, m (virtual work)."""
     down = dead.copy()
-    crowds = [pattern.hurts for pattern in prepared.patterns.values() if hasattr(pattern, "hurts")]
+    crowds = [pattern.hurts for pattern in prepared.patterns.values() if isinstance(pattern, Crowd)]
     down[prepared.geometry.deck] += max(crowds, default=0.0) * prepared.tributary
     forces = -response.forces[:, 1::2] @ down
     finite = np.where(np.isfinite(flexibility), flexibility, 0.0)

@@ -6,8 +6,8 @@ from collections.abc import Iterator
 
 from models import words
 from models.bridge import Footbridge
+from models.loading.dead import ASSUMED_CONNECTION_ALLOWANCE
 from models.rating.outcome import Outcome
-from models.rating.prepare import ASSUMED_CONNECTION_ALLOWANCE
 
 
 def assumptions_of(bridge: Footbridge, outcomes: tuple[Outcome, ...]) -> tuple[str, ...]:

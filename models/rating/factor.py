@@ -97,4 +97,5 @@ def demands(basis: Basis, dead: Array, live: Array) -> Array:
     (2, m) in tension and in compression, N; dead load alone where no live load acts that way.
     """
     size = (live * _SIGNS[None, :, None]).max(axis=0, initial=0.0)
-    return factored_dead(basis, dead) + basis.levels[-1].live * size
+    total: Array = factored_dead(basis, dead) + basis.levels[-1].live * size
+    return total

@@ -16,7 +16,7 @@ from models.rating.prepare import HALF_THROUGH_K, PreparedTruss, held_by_frames
 from models.rating.result import Reaction
 from models.rating.strength import member_of
 from models.resistance.columns import elastic_critical_load
-from models.section import centroid_shift, doubly_symmetric, slender
+from models.section import centroid_shift, slender
 from models.words import Figures
 
 _LARGE_DISPLACEMENT: Final = 1 / 50
@@ -90,7 +90,7 @@ def _compression_leaves_out(outcome: Outcome, figures: Figures, bridge: Footbrid
         plates = tuple(name for name, is_thin in zip(names, which, strict=True) if is_thin)
         yield number, "left out", words.slender_plate(plates)
     for number, fitted in enumerate(stock.fitted):
-        if not doubly_symmetric(fitted.built):
+        if not fitted.built.doubly_symmetric:
             yield number, "left out", words.not_doubly_symmetric()
     shift = centroid_shift(pieces.stack, pieces.thickness)
     length = outcome.prepared.geometry.lengths

@@ -138,4 +138,6 @@ def stock(fitted: Sequence[Fitted]) -> Stock:
         float,
     )
     exponent = np.array([2.0 if bar.built.shape == "round bar" else 1.0 for bar in fitted])
-    return Stock(tuple(fitted), stack([bar.built for bar in fitted]), *columns.T, exponent)
+    E, Fy, Fu, density, net_area, shear_lag, area = columns.T
+    stacked = stack([bar.built for bar in fitted])
+    return Stock(tuple(fitted), stacked, E, Fy, Fu, density, net_area, shear_lag, area, exponent)

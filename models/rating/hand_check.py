@@ -129,7 +129,7 @@ def _write_factor(outcome: Outcome, number: int, direction: int, resistance: Num
     size = max(sign * float(figures.live[load, direction, number]), 0.0)
     live = sheet.given("LL", size, "force", f"{live_name} at its worst, as {name}")
     for level in basis.levels:
-        _write_level(sheet, level, capacity, gdc * components + gdw * wearing, live)
+        _write_level(sheet, level, capacity, gdc * components + gdw * wearing, live, basis.rating_source)
     return ""
 
 
@@ -139,10 +139,10 @@ def _dead_factor(sheet: Sheet, symbol: str, factors: DeadFactors, effect: Number
     return sheet.given(symbol, factors.greatest if acts else factors.least, "ratio", what, factors.source)
 
 
-def _write_level(sheet: Sheet, level: Level, capacity: Number, dead: Number, live: Number) -> None:
+def _write_level(sheet: Sheet, level: Level, capacity: Number, dead: Number, live: Number, source: str) -> None:
     gamma = sheet.given(f"gLL {level.name}", level.live, "ratio", f"live load factor, {level.name}", level.source)
     factor = (capacity - dead) / (gamma * live)
-    sheet.note(f"RF {level.name}", greatest(factor, 0.0), "ratio", f"rating factor, {level.name}", level.rule)
+    sheet.note(f"RF {level.name}", greatest(factor, 0.0), "ratio", f"rating factor, {level.name}", source)
 
 
 def _write_capacity(outcome: Outcome, number: int, direction: int, resistance: Number, sheet: Sheet) -> Number:

@@ -5,11 +5,10 @@ from __future__ import annotations
 from collections.abc import Iterator
 
 from models.bridge import Footbridge, LiveLoad
+from models.loading.dead import ASSUMED_CONNECTION_ALLOWANCE
 from models.loading.live import VEHICLES
 from models.quantity import Quantity
-from models.rating.prepare import ASSUMED_CONNECTION_ALLOWANCE
-from models.rating.result import FactorLine
-from models.resistance.protocol import Basis
+from models.resistance.protocol import Basis, FactorLine
 
 _SITE = "site file"
 

@@ -7,6 +7,7 @@ from dataclasses import dataclass, field
 from typing import Final
 
 import numpy as np
+from numpy.typing import NDArray
 
 from models.bridge import Bar, Footbridge, Truss
 from models.calculation import Array
@@ -36,7 +37,7 @@ class Standing:
     response : of a determinate truss; None where forces depend on the bars' flexibility, or there are none.
     """
 
-    kept: Array
+    kept: NDArray[np.int64]
     geometry: Geometry
     stability: Stability
     response: Response | None

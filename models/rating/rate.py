@@ -116,11 +116,11 @@ def governing(basis: Basis, outcomes: tuple[Outcome, ...], choose: Callable[[Out
     factor = {level: float(value) if np.isfinite(value) else None for level, value in zip(levels, least, strict=True)}
     if not np.isfinite(least[-1]):
         return Governing(factor, None, None, None, None)
-    ties = []
+    ties: list[tuple[str, str, int, Outcome]] = []
     for outcome in outcomes:
         answer = solved[outcome.name]
         if answer is not None:
-            numbers = np.flatnonzero(answer.figures.lowest[-1] <= least[-1] * (1 + _TIE))
+            numbers = np.flatnonzero(answer.figures.lowest[-1] <= least[-1] * (1 + _TIE)).tolist()
             ties.extend((outcome.name, outcome.conditions[number].bar, number, outcome) for number in numbers)
     truss, bar, number, outcome = min(ties, key=lambda tie: tie[:2])
     check, load = check_and_load(replace(outcome, solved=solved[truss], cracked=frozenset()), number)

@@ -7,6 +7,7 @@ from dataclasses import dataclass
 from typing import Literal
 
 from models.finding import Finding
+from models.resistance.protocol import FactorLine
 from models.statics.stability import Verdict
 
 
@@ -142,15 +143,6 @@ class Governing:
     bar: str | None
     check: str | None
     load: str | None
-
-
-@dataclass(frozen=True, slots=True)
-class FactorLine:
-    """A factor or load with its value as text and the standard and clause that it comes from."""
-
-    what: str
-    value: str
-    source: str
 
 
 @dataclass(frozen=True, slots=True)

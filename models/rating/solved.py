@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from dataclasses import dataclass, fields
+from typing import Any
 
 import numpy as np
 from numpy.typing import NDArray
@@ -135,7 +136,7 @@ def _solve_once(task: Task, standing: Standing, flexibility: Array) -> Solved:
     return Solved(standing, answer, figures)
 
 
-def _spread(values: NDArray[np.generic], kept: Array, whole: int, empty: float = np.nan) -> NDArray[np.generic]:
+def _spread(values: NDArray[Any], kept: NDArray[np.int64], whole: int, empty: float = np.nan) -> NDArray[Any]:
     """Values of the bars that are in, at their places among all bars."""
     if len(kept) == whole:
         return values

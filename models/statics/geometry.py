@@ -36,13 +36,14 @@ class Geometry:
 
     @property
     def lengths(self) -> Array:
-        """(m,) length of each bar, m."""
-        start, end = self.coordinates[self.ends[:, 0]], self.coordinates[self.ends[:, 1]]
-        return np.hypot(*(end - start).T)
+        """Length of each bar, (m,), m."""
+        along, up = (self.coordinates[self.ends[:, 1]] - self.coordinates[self.ends[:, 0]]).T
+        lengths: Array = np.hypot(along, up)
+        return lengths
 
     @property
     def degree(self) -> int:
-        """m + r - 2j (Maxwell 1864): what counting alone says of the degree of redundancy."""
+        """M + r - 2j (Maxwell 1864): what counting alone says of the degree of redundancy."""
         return len(self.bars) + int(self.held.sum()) - 2 * len(self.joints)
 
     @property
