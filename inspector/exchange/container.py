@@ -6,7 +6,7 @@ from collections.abc import Callable, Mapping
 from dataclasses import dataclass
 from typing import Any, TypeVar
 
-from inspector.exchange.form import UNREADABLE, Form, Json, Text, join, shown
+from inspector.exchange.form import UNREADABLE, Form, Json, Null, Text, join, shown
 from models.errors import Problem
 
 T = TypeVar("T")
@@ -137,9 +137,9 @@ class Named(Form[Mapping[str, T]]):
 
 @dataclass(frozen=True)
 class Way:
-    """One of several ways to write a value: its JSON type, and the type of the program's value."""
+    """One of several ways to write a value: its JSON type (None is null), and the type of the program's value."""
 
-    json_type: type | None
+    json_type: type | tuple[type, ...] | None
     value_type: type | tuple[type, ...]
     form: Form[Any]
 
@@ -174,3 +174,8 @@ class Either(Form[Any]):
     def schema(self) -> dict[str, Json]:
         """See `Form`."""
         return {"anyOf": [way.form.schema() for way in self.ways]}
+
+
+def nullable(form: Form[Any], json_type: type | tuple[type, ...]) -> Either:
+    """A value of a form, or null where there is none."""
+    return Either((Way(None, type(None), Null()), Way(json_type, object, form)))

@@ -52,7 +52,7 @@ class Need:
 
 @dataclass(frozen=True)
 class Record(Form[T]):
-    """An object with known keys. A key that is not there is None and is not written.
+    """An object with known keys. A key that is not there is None and is not written, unless it is required.
 
     Parameters
     ----------
@@ -61,6 +61,7 @@ class Record(Form[T]):
     needs : keys that are required in some cases only.
     one_of : groups of keys of which exactly one group must be there, whole.
     least : how many keys must be there.
+    grows : whether keys may be there that this program does not know.
     """
 
     keys: tuple[Key, ...]
@@ -69,6 +70,7 @@ class Record(Form[T]):
     needs: tuple[Need, ...] = ()
     one_of: tuple[tuple[str, ...], ...] = ()
     least: int = 0
+    grows: bool = False
 
     @property
     def expected(self) -> str:
@@ -83,7 +85,7 @@ class Record(Form[T]):
         problems += [
             Problem(join(path, name), f"`{name}` is not a key here", nearest(name, known))
             for name in value
-            if name not in known
+            if name not in known and not self.grows
         ]
         if len(value) < self.least:
             self.refuse(value, path, problems, "the object is empty")
@@ -125,7 +127,7 @@ class Record(Form[T]):
             if key.identity and key.key not in self.take(value, "written"):
                 continue
             part = self.take(value, key.name)
-            if part is not None:
+            if part is not None or key.required:
                 document[key.key] = key.form.write(part)
         return document
 
@@ -135,7 +137,7 @@ class Record(Form[T]):
             "type": "object",
             "properties": {key.key: key.schema() for key in self.keys},
             "required": [key.key for key in self.keys if key.required],
-            "additionalProperties": False,
+            "additionalProperties": self.grows,
         }
         if self.least:
             plain["minProperties"] = self.least
