@@ -1,0 +1,118 @@
+"""The table of all bars: section, condition, forces, capacity and rating factors, a row a bar."""
+
+from __future__ import annotations
+
+from collections.abc import Mapping, Sequence
+
+from reportlab.platypus import Flowable
+
+from inspector.report.style import SMALL, heading, part, table, text
+from models import words
+from models.bridge import Footbridge, Truss
+from models.finding import Finding
+from models.rating.result import BarRating, Effect, Rating, TrussRating
+from models.words import Figures
+
+
+def bars(
+    rating: Rating, bridge: Footbridge, findings: Sequence[Finding], figures: Figures, width: float
+) -> list[Flowable]:
+    """All bars of all trusses."""
+    marks = _marks(findings)
+    story = part("All bars")
+    for name, truss in rating.trusses.items():
+        story += heading(f"Truss {name}", 90)
+        story.append(_table(rating, truss, bridge.trusses[name], marks, figures, width))
+    story.append(text(_NOTES, SMALL))
+    return story
+
+
+_NOTES = (
+    "Tension is positive. Dead and live forces are unfactored; live forces are the largest tension and compression "
+    "that the governing load gives (of all loads, where none governs). Tension and compression are factored "
+    "resistances, condition and system factor not in them. D/C is factored demand over capacity, margin is capacity less "
+    "demand, both of what governs at the upper level. Allowance is the share of every plate's remaining thickness that could "
+    "still go before the rating factor at the upper level falls to 1. Without it: the lowest rating factor of the "
+    "truss's other bars, or mechanism. F numbers are findings."
+)
+
+
+def _marks(findings: Sequence[Finding]) -> Mapping[tuple[str, str], list[str]]:
+    found: dict[tuple[str, str], list[str]] = {}
+    for number, finding in enumerate(findings, 1):
+        if finding.truss and finding.bar:
+            found.setdefault((finding.truss, finding.bar), []).append(f"F{number}")
+    return found
+
+
+def _table(
+    rating: Rating, rated: TrussRating, truss: Truss, marks: Mapping[tuple[str, str], list[str]], figures: Figures,
+    width: float,
+) -> Flowable:  # fmt: skip
+    force, area = figures.unit("force"), figures.unit("area")
+    head = (
+        "no.", "bar", "from – to", "section", "state", "known", f"area {area}", "kept", f"dead DC {force}",
+        f"dead DW {force}", f"live max {force}", f"live min {force}", f"tension {force}", f"compr. {force}", "check",
+        "load", "D/C", *(f"RF {level}" for level in rating.levels), f"margin {force}", "allow-ance", "without it",
+        "find-ings",
+    )  # fmt: skip
+    levels = len(rating.levels)
+    shares = (2.2, 5.2, 5.2, 4.8, 3.6, 5.2, 4.2, 3.6, 4.4, 4.2, 4.4, 4.4, 4.4, 4.6, 6, 4, 3.6, *(4.8,) * levels, 4.5,
+              4.0, 5.6, 3.8)  # fmt: skip
+    align = "r" + "lllll" + "rrrrrrrr" + "ll" + "r" * (levels + 4) + "l"
+    rows = [
+        (number, *_bar(bar, truss, rating, figures), ", ".join(marks.get((bar.truss, bar.bar), [])))
+        for number, bar in enumerate(rated.bars, 1)
+    ]
+    low = [number for number, bar in enumerate(rated.bars) if _below_one(bar, rating.upper_level)]
+    return table(head, rows, shares, width, align, bold_rows=low)
+
+
+def _below_one(bar: BarRating, level: str) -> bool:
+    value = bar.rating_factor.get(level)
+    return value is not None and value < 1
+
+
+def _bar(bar: BarRating, truss: Truss, rating: Rating, figures: Figures) -> tuple[str, ...]:
+    ends = truss.bar[bar.bar]
+    live = governing_live(bar)
+    area = figures.number(bar.area, "area", 4)
+    return (
+        bar.bar, f"{ends.start} – {ends.end}", bar.section, bar.state or "none", bar.known, area,
+        words.percent(bar.area / bar.nominal_area if bar.nominal_area else None),
+        number(bar.dead_components, figures), number(bar.dead_wearing, figures),
+        number(live.maximum if live else None, figures), number(live.minimum if live else None, figures),
+        number(bar.tension, figures), number(bar.compression, figures), bar.check or "none", bar.load or "none",
+        "none" if bar.demand_over_capacity is None else words.significant(bar.demand_over_capacity),
+        *(_factor(bar, rating, level) for level in rating.levels), number(bar.margin, figures),
+        words.percent(bar.loss_allowance), _without(bar.without_it),
+    )  # fmt: skip
+
+
+def _factor(bar: BarRating, rating: Rating, level: str) -> str:
+    """In a truss without forces there is no factor; elsewhere none means that no live load acts on the bar."""
+    value = bar.rating_factor.get(level)
+    if value is None and not rating.trusses[bar.truss].carries:
+        return "none"
+    return words.factor(value)
+
+
+def _without(found: float | str | None) -> str:
+    if found is None:
+        return "none"
+    return found if isinstance(found, str) else words.factor(found)
+
+
+def number(value: float | None, figures: Figures) -> str:
+    """A force to three significant digits, in the printed unit that stands in the head."""
+    return "none" if value is None else figures.number(value, "force")
+
+
+def governing_live(bar: BarRating) -> Effect | None:
+    """The live forces of the load that governs, else the extremes of all loads."""
+    if not bar.live:
+        return None
+    if bar.load is not None and bar.load in bar.live:
+        return bar.live[bar.load]
+    effects = bar.live.values()
+    return Effect(max(effect.maximum for effect in effects), min(effect.minimum for effect in effects))
