@@ -113,7 +113,7 @@ def answers(
     state = found.worst("the state", lambda entry: entry.state, _state_rank, str)
     severed = found.worst("whether it is severed", lambda entry: entry.severed, bool, _yes_or_no)
     slack = found.worst("whether it is slack", lambda entry: entry.slack, bool, _yes_or_no)
-    crack = found.worst("a crack", _crack, _crack_rank, found.crack_in_words)
+    crack: Answer[Cracked] | None = found.worst("a crack", _crack, _crack_rank, found.crack_in_words)
     bow = found.bow(length)
     seen, reason = _seen(entries, last_visit)
     return Answers(
