@@ -66,9 +66,9 @@ def rate(found: Site, before: Rated | None = None) -> Rated:
     again = before is not None and before.bridge is bridge
     prepared = before.prepared if before is not None and again else prepare(bridge)
     condition = fold_all(bridge, journal, before.condition if before is not None and again else None)
-    outcomes = outcomes_of(prepared, condition.bars, basis)
+    outcomes = outcomes_of(prepared, condition, basis)
     provenance = Provenance(site.fingerprint(bridge, journal), f"{PROGRAM} {VERSION}")
-    return Rated(bridge, journal, prepared, condition, outcomes, rating_of(bridge, outcomes, basis, provenance))
+    return Rated(bridge, journal, prepared, condition, outcomes, rating_of(condition, outcomes, basis, provenance))
 
 
 def result_text(rated: Rated) -> str:

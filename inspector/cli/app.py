@@ -9,7 +9,6 @@ import os
 import sys
 from collections.abc import Sequence
 
-import click
 import typer
 
 from inspector import PROGRAM, VERSION
@@ -51,34 +50,22 @@ def run(arguments: Sequence[str]) -> int:
     The exit code.
     """
     try:
-        code = commands(list(arguments), standalone_mode=False)
-        sys.stdout.flush()
-        return code if isinstance(code, int) else 0
-    except click.ClickException as error:
-        error.show()
+        commands(list(arguments))
+    except SystemExit as end:
+        return end.code if isinstance(end.code, int) else int(end.code is not None)
+    except (InputError, BasisNotAvailable) as error:
+        _say(_input_error(error) if isinstance(error, InputError) else str(error))
         return 2
-    except InputError as error:
-        _say(_input_error(error))
-        return 2
-    except BasisNotAvailable as error:
-        _say(str(error))
-        return 2
-    except InspectorError as error:
-        _say(str(error))
-        return 1
-    except (click.exceptions.Abort, KeyboardInterrupt):
-        _say("Stopped; what was stored stays stored.")
-        return 1
     except BrokenPipeError:
         # Whoever read our output has closed it: nothing is left to say, not even at exit.
         os.dup2(os.open(os.devnull, os.O_WRONLY), sys.stdout.fileno())
-        return 1
+    except InspectorError as error:
+        _say(str(error))
     except OSError as error:
         _say(f"{error.strerror or error}: {error.filename or 'no file name is known'}. Check the path and try again.")
-        return 1
     except Exception as error:  # noqa: BLE001 (the outermost edge: a fault of ours must not end in a traceback)
         _say(keep_fault(error))
-        return 1
+    return 1
 
 
 def _say(text: str) -> None:

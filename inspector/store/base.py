@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import json
+from collections.abc import Callable
 from typing import Annotated, Any, ClassVar, Final
 
 from sqlalchemy import REAL, Dialect, ForeignKey, MetaData, Text
@@ -19,11 +20,14 @@ NAMES: Final = {
 """Every constraint has a name, so that a later migration can speak of it."""
 
 
+_TOO_WIDE: Final = 2**63
+
+
 class PlainNumber(UserDefinedType[float]):
     """A bare number of a site file, as it was written.
 
     A column without a declared type keeps 1 and 1.0 apart; a REAL or NUMERIC one would not, and the
-    site would not be written back as it was read.
+    site would not be written back as it was read. A whole number beyond SQLite's 64 bits is kept by its digits.
     """
 
     cache_ok = True
@@ -31,6 +35,14 @@ class PlainNumber(UserDefinedType[float]):
     def get_col_spec(self, **_: object) -> str:
         """No declared type."""
         return ""
+
+    def bind_processor(self, dialect: Dialect) -> Callable[[float | None], float | str | None]:
+        """From a number to what SQLite holds without changing it."""
+        return lambda number: str(number) if isinstance(number, int) and abs(number) >= _TOO_WIDE else number
+
+    def result_processor(self, dialect: Dialect, coltype: object) -> Callable[[float | str | None], float | None]:
+        """From what SQLite holds to the number."""
+        return lambda held: int(held) if isinstance(held, str) else held
 
 
 class PlainJson(TypeDecorator[Any]):

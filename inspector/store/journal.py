@@ -36,6 +36,14 @@ def load(session: Session, bridge_id: str) -> tuple[Visit, ...]:
     )
 
 
+def entries_of(session: Session, bridge_id: str, truss: str, bar: str) -> tuple[Entry, ...]:
+    """All entries about one bar, visit by visit in the order in which they were stored."""
+    about = (EntryRow.bridge_id == bridge_id) & (EntryRow.truss == truss) & (EntryRow.bar == bar)
+    same_visit = (VisitRow.bridge_id == EntryRow.bridge_id) & (VisitRow.id == EntryRow.visit_id)
+    query = select(EntryRow).join(VisitRow, same_visit).where(about).order_by(VisitRow.ordinal, EntryRow.ordinal)
+    return tuple(gather(Entry, row) for row in session.scalars(query))
+
+
 def add_journal(session: Session, bridge_id: str, journal: Journal) -> tuple[int, int]:
     """Add what is not stored yet; returns how many visits and how many entries that was.
 

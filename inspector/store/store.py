@@ -154,6 +154,11 @@ class Store:
         with self._read() as session:
             return self._journal(session, bridge_id)
 
+    def entries_of(self, bridge_id: str, truss: str, bar: str) -> tuple[Entry, ...]:
+        """All entries about one bar, in the order in which they were stored."""
+        with self._read() as session:
+            return journals.entries_of(session, bridge_id, truss, bar)
+
     def open_visit(self, bridge_id: str, visit: Visit) -> Visit:
         """Store a new visit, with the entries that it has already."""
         with self._write() as session:

@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from collections.abc import Callable, Mapping
+from collections.abc import Callable
 from dataclasses import replace
 from itertools import chain
 
@@ -10,7 +10,7 @@ import numpy as np
 
 from models import words
 from models.bridge import Footbridge
-from models.condition import BarCondition
+from models.condition import Condition
 from models.finding import LEVELS, Finding
 from models.rating import findings
 from models.rating.assumptions import assumptions_of
@@ -24,26 +24,24 @@ from models.resistance.protocol import Basis
 
 _TIE = 1e-9
 
-Conditions = Mapping[tuple[str, str], BarCondition]
-"""By (truss, bar)."""
 
-
-def rate(prepared: Prepared, conditions: Conditions, basis: Basis, provenance: Provenance) -> Rating:
+def rate(prepared: Prepared, condition: Condition, basis: Basis, provenance: Provenance) -> Rating:
     """A rating factor for every bar and for the structure.
 
     Parameters
     ----------
     prepared : what does not depend on a reading; kept by the caller from rating to rating.
-    conditions : of every bar.
+    condition : of every bar, folded from the journal of the same bridge.
     provenance : what the rating is made from, for whoever reads it later.
     """
-    return rating_of(prepared.bridge, outcomes_of(prepared, conditions, basis), basis, provenance)
+    return rating_of(condition, outcomes_of(prepared, condition, basis), basis, provenance)
 
 
-def rating_of(bridge: Footbridge, outcomes: tuple[Outcome, ...], basis: Basis, provenance: Provenance) -> Rating:
+def rating_of(condition: Condition, outcomes: tuple[Outcome, ...], basis: Basis, provenance: Provenance) -> Rating:
     """What solved trusses say, as values ready to be shown."""
+    bridge = condition.bridge
     trusses = {outcome.name: _truss_rating(bridge, outcome) for outcome in outcomes}
-    found = [*findings.of_bridge(bridge)]
+    found = [*findings.of_bridge(bridge), *condition.findings]
     for outcome in outcomes:
         found.extend(findings.of_truss(bridge, outcome, trusses[outcome.name].reactions))
     bars = tuple(chain.from_iterable(truss.bars for truss in trusses.values()))
@@ -65,12 +63,9 @@ def rating_of(bridge: Footbridge, outcomes: tuple[Outcome, ...], basis: Basis, p
     return _with_other_answers(rating, basis, outcomes)
 
 
-def outcomes_of(prepared: Prepared, conditions: Conditions, basis: Basis) -> tuple[Outcome, ...]:
+def outcomes_of(prepared: Prepared, condition: Condition, basis: Basis) -> tuple[Outcome, ...]:
     """Each truss solved in its condition, in the order of the site."""
-    return tuple(
-        outcome_of(prepared, name, tuple(conditions[name, bar.id] for bar in truss.truss.bars), basis)
-        for name, truss in prepared.trusses.items()
-    )
+    return tuple(outcome_of(prepared, name, condition.of_truss(name), basis) for name in prepared.trusses)
 
 
 def _truss_rating(bridge: Footbridge, outcome: Outcome) -> TrussRating:

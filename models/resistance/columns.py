@@ -56,7 +56,8 @@ def slenderness(E: Array, area: Array, critical_load: Array) -> Array:
 
 
 def _over(number: Number, divisor: Number) -> Number:
-    """A quotient that is not used where the divisor is zero, and raises no warning there."""
+    """A quotient that no one uses where it is above 1/0.44; there it is bounded, so that nothing overflows."""
     if isinstance(divisor, Traced):
         return number / divisor if divisor.value else number
-    return number / np.where(divisor > 0, divisor, 1.0)
+    bounded = np.maximum(divisor, number / 10)
+    return number / np.where(bounded > 0, bounded, 1.0)
