@@ -41,7 +41,7 @@ def demo(
     found = samples.sample(sample)
     folder.mkdir(parents=True, exist_ok=True)
     out = shown.console()
-    out.print(Text(f"PRELIMINARY. {words.CAUTION}", style="bold"))
+    out.print(Text(words.CAUTION, style="bold"))
     out.print()
     if found.bridge.notes:
         out.print(Text(found.bridge.notes))

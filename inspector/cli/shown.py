@@ -14,7 +14,7 @@ from inspector.desk import Rated
 from models import words
 from models.finding import Finding
 from models.rating import BarCheck
-from models.rating.result import BarRating, Governing, Rating
+from models.rating.result import BarRating, Governing, Rating, TrussRating
 
 WIDTH = 100
 
@@ -30,7 +30,7 @@ def console(*, error: bool = False) -> Console:
 def rating_of(out: Console, rated: Rated) -> None:
     """The whole result: caution, what to act on, the structure, trusses, all bars, assumptions."""
     rating = rated.rating
-    out.print(Text(f"PRELIMINARY. {words.CAUTION}", style="bold"))
+    out.print(Text(words.CAUTION, style="bold"))
     out.print()
     _findings(out, [finding for finding in rating.findings if finding.level == "act now"])
     out.print(Text(f"{rating.site}, basis {rating.basis}", style="bold"))
@@ -43,8 +43,9 @@ def rating_of(out: Console, rated: Rated) -> None:
             out.print(f"{name}: {structure_line(rating, other)}")
     for truss in rating.trusses.values():
         counted = f"{words.count(truss.bars_standing, 'bar')}, {words.count(truss.joints, 'joint')}"
-        out.print(f"Truss {truss.name}: {truss.verdict}; {counted}, degree {truss.degree}.")
-    out.print(bars_table(rating))
+        out.print()
+        out.print(Text(f"Truss {truss.name}: {truss.verdict}; {counted}, degree {truss.degree}", style="bold"))
+        out.print(bars_table(rating, truss))
     _findings(out, [finding for finding in rating.findings if finding.level != "act now" and finding.bar is None])
     _counted_findings(out, rating)
     out.print(Text("Assumed", style="bold"))
@@ -66,18 +67,18 @@ def structure_line(rating: Rating, found: Governing) -> str:
     )
 
 
-def bars_table(rating: Rating) -> Table:
-    """Every bar, a line each."""
-    table = Table(box=SIMPLE_HEAD, padding=(0, 1), pad_edge=False)
+def bars_table(rating: Rating, truss: TrussRating) -> Table:
+    """Every bar of a truss, a line each."""
+    table = Table(box=SIMPLE_HEAD, padding=(0, 1, 0, 0), pad_edge=False)
     for head in ("bar", "known", "state"):
         table.add_column(head, overflow="fold")
     for level in rating.levels:
         table.add_column(level, justify="right")
     for head in ("check", "load"):
         table.add_column(head, overflow="fold")
-    table.add_column("may lose", justify="right")
-    table.add_column("without it", justify="right")
-    for bar in rating.bars:
+    table.add_column("may\nlose", justify="right")
+    table.add_column("without\nit", justify="right")
+    for bar in truss.bars:
         table.add_row(*(Text(cell) for cell in _cells(rating, bar)), style="bold" if _is_low(rating, bar) else None)
     return table
 
@@ -88,7 +89,7 @@ def _cells(rating: Rating, bar: BarRating) -> list[str]:
     may_lose = "-" if bar.loss_allowance is None else words.percent(bar.loss_allowance)
     known = bar.known + (" *" if any(finding.level == "left out" for finding in bar.findings) else "")
     return [
-        f"{bar.truss}/{bar.bar}",
+        bar.bar,
         known,
         bar.state or "-",
         *factors,
@@ -141,7 +142,7 @@ def hand_check_of(out: Console, rated: Rated, check: BarCheck) -> None:
     """One bar's calculation, a line a step."""
     figures = words.Figures(rated.bridge.units or "SI")
     out.print(Text(f"Hand check of {check.truss}/{check.bar}, basis {rated.rating.basis}", style="bold"))
-    out.print(Text(f"PRELIMINARY. {words.CAUTION}"))
+    out.print(Text(words.CAUTION))
     for step in check.steps:
         out.print()
         out.print(Text(f"{step.title}" + (f"  [{step.source}]" if step.source else ""), style="dim"))
