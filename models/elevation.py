@@ -15,11 +15,11 @@ from models.bridge import Bar, Truss
 from models.labels import Stretch, along, around, place, short_name, upright
 from models.picture import Line, Picture, Point, Text, as_boxes, box_along, overlaps
 from models.rating.result import BarRating, TrussRating
-from models.symbols import circle, cross, deck_line, legend, pin, roller, scale_bar, strokes, way_ahead
+from models.symbols import circle, cross, deck_line, legend, pin, roller, scale_bar, strokes, support_box, way_ahead
 from models.views import GONE, VIEWS, View
 from models.words import Figures
 
-BAR_DEPTH: Final = 0.36
+BAR_DEPTH: Final = 0.6
 """Drawn depth of a bar, in text heights."""
 
 _SMALLER: Final = 0.92
@@ -176,7 +176,7 @@ def _drawn(sheet: _Sheet) -> Picture:
     lines = [line for bar in sheet.truss.bars for line in _bar(sheet, bar, stretches[bar.id])]
     joints = [circle(point, 0.22 * sheet.height, "joint", "paper", name) for name, point in sheet.at.items()]
     fixed = [*floor_texts, *below_texts]
-    texts = [*fixed, *_labels(sheet, stretches, supports, fixed)]
+    texts = [*fixed, *_labels(sheet, stretches, fixed)]
     every = [*floor, *supports, *lines, *joints, *below]
     lower, upper = _corners(every, texts, 0.5 * sheet.height)
     title = (
@@ -236,12 +236,10 @@ def _off(stretch: Stretch, fraction: float, across: float) -> Point:
     return x, stretch.start[1] + fraction * (stretch.end[1] - stretch.start[1]) + across * math.cos(turn)
 
 
-def _labels(
-    sheet: _Sheet, stretches: Mapping[str, Stretch], supports: list[Line], fixed: list[Text]
-) -> tuple[Text, ...]:
+def _labels(sheet: _Sheet, stretches: Mapping[str, Stretch], fixed: list[Text]) -> tuple[Text, ...]:
     """Names of joints, then of bars, the shortest bar first because it has the least choice."""
     strokes_of = [box_along(one.start, one.end, one.depth) for one in stretches.values()]
-    stands = [box_along(line.points[0], line.points[-1], 0.3 * sheet.height) for line in supports if line.shade is None]
+    stands = [support_box(sheet.at[joint], sheet.height) for joint in sheet.truss.supports]
     requests = [
         around(point, sheet.look.joint(name), sheet.height, point[1] > sheet.middle[1])
         for name, point in sheet.at.items()

@@ -94,7 +94,8 @@ def upright(start: Point, end: Point, depth: float, height: float, centre: Point
 
     ``centre`` is a point on the side that labels rather keep away from; None where either side will do.
     """
-    if (end[0] - start[0], end[1] - start[1]) < (1e-9 * math.dist(start, end), 0.0):
+    level = 1e-9 * math.dist(start, end)
+    if end[0] - start[0] < -level or (end[0] - start[0] <= level and end[1] < start[1]):
         start, end = end, start
     if centre is None:
         return Stretch(start, end, depth, height, 1)

@@ -27,6 +27,11 @@ def _triangle(joint: Point, height: float, of: str) -> Line:
                 "medium", "solid", "paper", of)  # fmt: skip
 
 
+def support_box(joint: Point, height: float) -> tuple[float, float, float, float, float, float]:
+    """The rectangle that a support's sign covers."""
+    return joint[0], joint[1] - 0.85 * height, 1.2 * height, 0.85 * height, 1.0, 0.0
+
+
 def pin(joint: Point, height: float, of: str) -> list[Line]:
     """A support that holds both ways: a triangle on hatched ground."""
     x, base = joint[0], joint[1] - 1.2 * height
@@ -72,7 +77,7 @@ def strokes(start: Point, end: Point, height: float, of: str) -> list[Line]:
     if not length:
         return []
     dx, dy = (end[0] - start[0]) / length, (end[1] - start[1]) / length
-    reach = 0.34 * height
+    reach = 0.45 * height
     found = []
     for k in range(number):
         x, y = start[0] + dx * length * (k + 0.5) / number, start[1] + dy * length * (k + 0.5) / number
@@ -131,7 +136,7 @@ def legend(view: View, bars: Sequence[BarRating]) -> tuple[LegendRow, ...]:
     rows = [
         LegendRow(
             (
-                Line(((0.0, 0.32), (4.0, 0.32), (4.0, 0.68), (0.0, 0.68)), "bar", band.weight, "solid", band.shade),
+                Line(((0.0, 0.2), (4.0, 0.2), (4.0, 0.8), (0.0, 0.8)), "bar", band.weight, "solid", band.shade),
                 Line(ends, "axis", "thin", band.pattern),
             ),
             band.text,

@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 import sys
-from collections.abc import Iterable
+from collections.abc import Sequence
 
 from rich.box import SIMPLE_HEAD
 from rich.console import Console
@@ -86,7 +86,7 @@ def bars_table(rating: Rating, truss: TrussRating) -> Table:
 def _cells(rating: Rating, bar: BarRating) -> list[str]:
     without = words.factor(bar.without_it) if isinstance(bar.without_it, float) else bar.without_it or "-"
     factors = [_factor(bar, bar.rating_factor[level]) for level in rating.levels]
-    may_lose = "-" if bar.loss_allowance is None else words.percent(bar.loss_allowance)
+    may_lose = _may_lose(rating, bar)
     known = bar.known + (" *" if any(finding.level == "left out" for finding in bar.findings) else "")
     return [
         bar.bar,
@@ -100,6 +100,12 @@ def _cells(rating: Rating, bar: BarRating) -> list[str]:
     ]
 
 
+def _may_lose(rating: Rating, bar: BarRating) -> str:
+    if bar.loss_allowance is None:
+        return "-" if bar.rating_factor[rating.upper_level] is None else "> 95 %"
+    return words.percent(bar.loss_allowance)
+
+
 def _factor(bar: BarRating, value: float | None) -> str:
     if value is None:
         return "no forces" if bar.dead_components is None else "no live"
@@ -111,14 +117,13 @@ def _is_low(rating: Rating, bar: BarRating) -> bool:
     return lowest is not None and lowest < 1
 
 
-def _findings(out: Console, findings: Iterable[Finding]) -> None:
+def _findings(out: Console, findings: Sequence[Finding]) -> None:
     for finding in findings:
         place = "/".join(part for part in (finding.truss, finding.bar) if part)
-        style = "bold" if finding.level == "act now" else None
-        out.print(
-            Text(f"{finding.level.upper() if finding.level == 'act now' else finding.level}: ", style=style), end=""
-        )
-        out.print(Text(f"{place}: {finding.text}" if place else finding.text, style=style))
+        urgent = finding.level == "act now"
+        level = finding.level.upper() if urgent else finding.level
+        line = f"{level}: {place}: {finding.text}" if place else f"{level}: {finding.text}"
+        out.print(Text(line, style="bold" if urgent else ""))
     if any(finding.level == "act now" for finding in findings):
         for step in words.ACT_NOW_STEPS:
             out.print(f"  - {step}")

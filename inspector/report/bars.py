@@ -6,34 +6,32 @@ from collections.abc import Mapping, Sequence
 
 from reportlab.platypus import Flowable
 
-from inspector.report.style import SMALL, heading, part, table, text
+from inspector.report.style import NOTE, heading, part, table, text
 from models import words
-from models.bridge import Footbridge, Truss
 from models.finding import Finding
 from models.rating.result import BarRating, Effect, Rating, TrussRating
 from models.words import Figures
 
 
-def bars(
-    rating: Rating, bridge: Footbridge, findings: Sequence[Finding], figures: Figures, width: float
-) -> list[Flowable]:
+def bars(rating: Rating, findings: Sequence[Finding], figures: Figures, width: float) -> list[Flowable]:
     """All bars of all trusses."""
     marks = _marks(findings)
     story = part("All bars")
     for name, truss in rating.trusses.items():
         story += heading(f"Truss {name}", 90)
-        story.append(_table(rating, truss, bridge.trusses[name], marks, figures, width))
-    story.append(text(_NOTES, SMALL))
+        story.append(_table(rating, truss, marks, figures, width))
+    story.append(text(_NOTES, NOTE))
     return story
 
 
 _NOTES = (
     "Tension is positive. Dead and live forces are unfactored; live forces are the largest tension and compression "
     "that the governing load gives (of all loads, where none governs). Tension and compression are factored "
-    "resistances, condition and system factor not in them. D/C is factored demand over capacity, margin is capacity less "
-    "demand, both of what governs at the upper level. Allowance is the share of every plate's remaining thickness that could "
-    "still go before the rating factor at the upper level falls to 1. Without it: the lowest rating factor of the "
-    "truss's other bars, or mechanism. F numbers are findings."
+    "resistances, condition and system factor not in them. D/C is factored demand over capacity, margin is capacity "
+    "less demand, both of what governs at the upper level. May lose: the share of every plate's remaining thickness "
+    "that could still go before the rating factor at the upper level falls to 1. Without it: the lowest rating factor "
+    "of the truss's other bars, or mechanism. See: numbers of findings. Ends, lengths and roles of the bars stand with "
+    "the model."
 )
 
 
@@ -46,22 +44,21 @@ def _marks(findings: Sequence[Finding]) -> Mapping[tuple[str, str], list[str]]:
 
 
 def _table(
-    rating: Rating, rated: TrussRating, truss: Truss, marks: Mapping[tuple[str, str], list[str]], figures: Figures,
+    rating: Rating, rated: TrussRating, marks: Mapping[tuple[str, str], list[str]], figures: Figures,
     width: float,
 ) -> Flowable:  # fmt: skip
     force, area = figures.unit("force"), figures.unit("area")
     head = (
-        "no.", "bar", "from – to", "section", "state", "known", f"area {area}", "kept", f"dead DC {force}",
+        "no.", "bar", "section", "state", "known", f"area {area}", "kept", f"dead DC {force}",
         f"dead DW {force}", f"live max {force}", f"live min {force}", f"tension {force}", f"compr. {force}", "check",
-        "load", "D/C", *(f"RF {level}" for level in rating.levels), f"margin {force}", "allow-ance", "without it",
-        "find-ings",
+        "load", "D/C", *(f"RF {level}" for level in rating.levels), f"margin {force}", "may lose", "without it",
+        "see",
     )  # fmt: skip
     levels = len(rating.levels)
-    shares = (2.2, 5.2, 5.2, 4.8, 3.6, 5.2, 4.2, 3.6, 4.4, 4.2, 4.4, 4.4, 4.4, 4.6, 6, 4, 3.6, *(4.8,) * levels, 4.5,
-              4.0, 5.6, 3.8)  # fmt: skip
-    align = "r" + "lllll" + "rrrrrrrr" + "ll" + "r" * (levels + 4) + "l"
+    shares = (14, 38, 36, 25, 54, 30, 26, 30, 28, 31, 31, 30, 30, 62, 34, 26, *(37,) * levels, 32, 24, 44, 24)
+    align = "r" + "llll" + "rrrrrrrr" + "ll" + "r" * (levels + 4) + "l"
     rows = [
-        (number, *_bar(bar, truss, rating, figures), ", ".join(marks.get((bar.truss, bar.bar), [])))
+        (number, *_bar(bar, rating, figures), ", ".join(marks.get((bar.truss, bar.bar), [])))
         for number, bar in enumerate(rated.bars, 1)
     ]
     low = [number for number, bar in enumerate(rated.bars) if _below_one(bar, rating.upper_level)]
@@ -73,12 +70,11 @@ def _below_one(bar: BarRating, level: str) -> bool:
     return value is not None and value < 1
 
 
-def _bar(bar: BarRating, truss: Truss, rating: Rating, figures: Figures) -> tuple[str, ...]:
-    ends = truss.bar[bar.bar]
+def _bar(bar: BarRating, rating: Rating, figures: Figures) -> tuple[str, ...]:
     live = governing_live(bar)
     area = figures.number(bar.area, "area", 4)
     return (
-        bar.bar, f"{ends.start} – {ends.end}", bar.section, bar.state or "none", bar.known, area,
+        bar.bar, bar.section, bar.state or "none", bar.known, area,
         words.percent(bar.area / bar.nominal_area if bar.nominal_area else None),
         number(bar.dead_components, figures), number(bar.dead_wearing, figures),
         number(live.maximum if live else None, figures), number(live.minimum if live else None, figures),

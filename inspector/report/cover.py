@@ -71,6 +71,6 @@ def _signatures(width: float) -> Any:
         ("LEFTPADDING", (0, 0), (-1, -1), 2),
     ]
     shares = (0.14, 0.27, 0.21, 0.12, 0.26)
-    heights = [5 * mm, *(11 * mm for _ in _SIGNERS)]
+    heights = [5 * mm, *(15 * mm for _ in _SIGNERS)]
     return Table([head, *rows], colWidths=[width * share for share in shares], rowHeights=heights, style=style,
                  hAlign="LEFT")  # fmt: skip

@@ -88,21 +88,21 @@ def _story(
 ) -> list[Flowable]:  # fmt: skip
     figures = Figures(bridge.units or "SI")
     upright, across = page[0] - 2 * MARGIN, page[1] - 2 * MARGIN
-    parts: list[tuple[str, list[Flowable]]] = [
-        (_UPRIGHT, cover(rating, bridge, journal, upright)),
-        (_UPRIGHT, result_page(rating, findings, figures, upright)),
-        (_ACROSS, elevations(rating, bridge, figures, across, page[0] - MARGIN - FOOT - HEAD)),
-        (_ACROSS, bars(rating, bridge, findings, figures, across)),
-        (_UPRIGHT, checks(rating, hand_checks, figures, upright)),
-        (_ACROSS, readings(journal, findings, figures, across)),
-        (_UPRIGHT, loads(rating, bridge, figures, upright)),
-        (_UPRIGHT, model(rating, bridge, figures, upright)),
-        (_UPRIGHT, findings_and_assumptions(rating, bridge, findings, upright)),
-        (_UPRIGHT, review(upright)),
+    parts: list[tuple[str, bool, list[Flowable]]] = [
+        (_UPRIGHT, True, cover(rating, bridge, journal, upright)),
+        (_UPRIGHT, True, result_page(rating, findings, figures, upright)),
+        (_ACROSS, True, elevations(rating, bridge, figures, across, page[0] - MARGIN - FOOT - HEAD)),
+        (_ACROSS, True, bars(rating, findings, figures, across)),
+        (_UPRIGHT, True, checks(rating, hand_checks, figures, upright)),
+        (_ACROSS, True, readings(journal, findings, figures, across)),
+        (_UPRIGHT, True, loads(rating, bridge, figures, upright)),
+        (_UPRIGHT, False, model(rating, bridge, figures, upright)),
+        (_UPRIGHT, False, findings_and_assumptions(rating, bridge, findings, upright)),
+        (_UPRIGHT, True, review(upright)),
     ]
     story: list[Flowable] = []
-    for way, content in parts:
-        if story:
+    for way, fresh_page, content in parts:
+        if story and fresh_page:
             story += [NextPageTemplate(way), PageBreak()]
         story += content
     return story

@@ -10,14 +10,14 @@ from reportlab.lib import colors
 from reportlab.platypus import Flowable, KeepTogether
 
 from inspector.report.fonts import BOLD, REGULAR, visible
-from inspector.report.style import HEADING, SMALL, gap, part, text
+from inspector.report.style import HEADING, NOTE, gap, part, text
 from models.bridge import Footbridge
 from models.elevation import in_parts
 from models.picture import PALETTE, LegendRow, Line, Picture, Text
 from models.rating.result import Rating
 from models.words import Figures
 
-_WEIGHTS: Final = {"thin": 0.5, "medium": 1.0, "heavy": 1.6}
+_WEIGHTS: Final = {"thin": 0.5, "medium": 0.8, "heavy": 1.3}
 _DASHES: Final[dict[str, list[float] | None]] = {
     "solid": None, "dashed": [4, 2.4], "dotted": [0.8, 1.8], "dash dot": [5, 1.6, 0.8, 1.6], "blank": None,
 }  # fmt: skip
@@ -35,8 +35,7 @@ def elevations(rating: Rating, bridge: Footbridge, figures: Figures, width: floa
             block = [text(f"Truss {name}: {picture.title}", HEADING), drawing(picture, width, share), gap(4)]
             story.append(KeepTogether(block))
         story.append(_legend(pictures[0].legend, width))
-        story.append(text(_SIGNS, SMALL))
-    return story
+    return [*story, text(_SIGNS, NOTE)]
 
 
 _SIGNS: Final = (

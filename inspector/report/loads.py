@@ -7,8 +7,8 @@ from collections.abc import Iterator, Mapping
 from reportlab.platypus import Flowable
 
 from inspector.report.bars import number
-from inspector.report.style import BODY, SMALL, heading, part, table, text
-from models.bridge import Footbridge, Rectangle, Section, SectionDimension, Truss
+from inspector.report.style import BODY, NOTE, heading, part, table, text
+from models.bridge import Bar, Footbridge, Rectangle, Section, SectionDimension, Truss
 from models.quantity import Quantity
 from models.rating.result import Rating, TrussRating
 from models.words import Figures
@@ -91,6 +91,7 @@ def model(rating: Rating, bridge: Footbridge, figures: Figures, width: float) ->
         story += _moving(name, rated)
     for name, truss in bridge.trusses.items():
         story += _panel_points(name, truss, width)
+        story += _bars(name, truss, rating.trusses[name], figures, width)
     story += _steel(bridge, width)
     return story
 
@@ -124,6 +125,32 @@ def _panel_points(name: str, truss: Truss, width: float) -> list[Flowable]:
     return story
 
 
+def _bars(name: str, truss: Truss, rated: TrussRating, figures: Figures, width: float) -> list[Flowable]:
+    """Where each bar runs, and what the site says of how it is held and joined."""
+    if truss.same_as:
+        return []
+    lengths = {bar.bar: figures.text(bar.length, "length", 4) for bar in rated.bars}
+    rows = [
+        (k, bar.id, bar.start, bar.end, bar.role, lengths.get(bar.id, ""), bar.section, bar.material, _held(bar))
+        for k, bar in enumerate(truss.bars, 1)
+    ]
+    head = ("no.", "bar", "from", "to", "role", "length", "section", "material", "as given in the site file")
+    shares = (1, 2.6, 2, 2, 3, 2, 2.6, 2.6, 6)
+    return [*heading(f"Truss {name}: bars as built", 80), table(head, rows, shares, width, "rllllr")]
+
+
+def _held(bar: Bar) -> str:
+    given: dict[str, object] = {
+        "K in plane": bar.k_in_plane, "K out of plane": bar.k_out_of_plane,
+        "unbraced out of plane": bar.unbraced_out_of_plane and bar.unbraced_out_of_plane.text, "ends": bar.ends,
+        "net area": bar.net_area, "shear lag": bar.shear_lag, "connected": bar.connected, "turned": bar.turned,
+        "system": bar.system, "because": bar.system_reason,
+        "stitch spacing": bar.stitch_spacing and bar.stitch_spacing.text,
+    }  # fmt: skip
+    said = [f"{name} {value}" for name, value in given.items() if value is not None]
+    return "; ".join([*said, "tension only"] if bar.tension_only else said)
+
+
 def _steel(bridge: Footbridge, width: float) -> list[Flowable]:
     story = heading("Sections as built")
     rows = [(name, section.shape, "; ".join(_dimensions(section))) for name, section in bridge.sections.items()]
@@ -136,7 +163,7 @@ def _steel(bridge: Footbridge, width: float) -> list[Flowable]:
     ]  # fmt: skip
     head = ("material", "kind", "modulus E", "yield strength Fy", "tensile strength Fu", "density")
     story.append(table(head, materials, (3, 3, 2, 3, 3, 3), width))
-    story.append(text("Where a strength is not given, the value that was used stands in the assumptions.", SMALL))
+    story.append(text("Where a strength is not given, the value that was used stands in the assumptions.", NOTE))
     return story
 
 

@@ -6,7 +6,7 @@ from collections.abc import Mapping, Sequence
 
 from reportlab.platypus import Flowable
 
-from inspector.report.style import BODY, SMALL, heading, part, table, text
+from inspector.report.style import BODY, NOTE, heading, part, table, text
 from models import words
 from models.finding import Finding
 from models.journal import Bow, Crack, Entry, Journal, Reading, Visit
@@ -29,7 +29,7 @@ def readings(journal: Journal, findings: Sequence[Finding], figures: Figures, wi
         story += _readings(visit, marks, figures, width)
         story += _entries(visit, marks, width)
         story += _calls(visit, width)
-    story.append(text(_NOTES, SMALL))
+    story.append(text(_NOTES, NOTE))
     return story
 
 
@@ -110,7 +110,7 @@ def _entries(visit: Visit, marks: Marks, width: float) -> list[Flowable]:
     ]  # fmt: skip
     if not rows:
         return []
-    return [text("Other entries", SMALL), table(head, rows, (4, 4, 6, 2.6, 8, 8, 5, 6, 3.4), width)]
+    return [text("Other entries", NOTE), table(head, rows, (4, 4, 6, 2.6, 8, 8, 5, 6, 3.4), width)]
 
 
 def _seen(entry: Entry) -> str:
@@ -167,4 +167,4 @@ def _calls(visit: Visit, width: float) -> list[Flowable]:
     if not visit.calls:
         return []
     rows = [(call.who or "", call.when or "", call.said or "", call.left or "") for call in visit.calls]
-    return [text("Who was told", SMALL), table(("who", "when", "said", "left"), rows, (4, 3, 8, 4), width)]
+    return [text("Who was told", NOTE), table(("who", "when", "said", "left"), rows, (4, 3, 8, 4), width)]

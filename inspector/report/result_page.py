@@ -16,6 +16,7 @@ from models.words import Figures
 
 GOVERNING: Final = 5
 _MOST_NAMED: Final = 40
+_MOST_URGENT: Final = 8
 
 
 def lowest_bars(rating: Rating, number: int = GOVERNING) -> tuple[BarRating, ...]:
@@ -40,10 +41,10 @@ def result_page(rating: Rating, findings: Sequence[Finding], figures: Figures, w
     urgent = [finding for finding in findings if finding.level == "act now"]
     if urgent:
         story += heading("Act now")
-        rows = [(place_of(finding), finding.text) for finding in urgent[:_MOST_NAMED]]
+        rows = [(place_of(finding), finding.text) for finding in urgent[:_MOST_URGENT]]
         story.append(table(("where", "what"), rows, (1, 4), width, bold_rows=range(len(rows))))
-        if len(urgent) > _MOST_NAMED:
-            story.append(text(f"and {len(urgent) - _MOST_NAMED} more, all in the list of findings", BODY))
+        if len(urgent) > _MOST_URGENT:
+            story.append(text(f"and {len(urgent) - _MOST_URGENT} more, all in the list of findings", BODY))
     story += _headline(rating)
     story += _lowest(rating, figures, width)
     story += _other_answers(rating, width)

@@ -38,17 +38,18 @@ def _style(name: str, size: float, *, bold: bool = False, before: float = 0, aft
 
 
 TITLE: Final = _style("title", 20, bold=True, after=6)
-PART: Final = _style("part", 13, bold=True, before=2, after=5, keepWithNext=1)
-HEADING: Final = _style("heading", 9.5, bold=True, before=8, after=3, keepWithNext=1)
+PART: Final = _style("part", 13, bold=True, before=10, after=5)
+HEADING: Final = _style("heading", 9.5, bold=True, before=8, after=3)
 BODY: Final = _style("body", 8.5, after=3)
 SMALL: Final = _style("small", 7)
+NOTE: Final = _style("note", 7, before=4, after=2)
 STRONG: Final = _style("strong", 8.5, bold=True, after=3)
 STAMP: Final = _style("stamp", 11, bold=True, after=4)
 FIGURE: Final = _style("figure", 26, bold=True)
-CELL: Final = _style("cell", 6.6)
-CELL_BOLD: Final = _style("cell bold", 6.6, bold=True)
-CELL_RIGHT: Final = _style("cell right", 6.6, alignment=2)
-CELL_RIGHT_BOLD: Final = _style("cell right bold", 6.6, bold=True, alignment=2)
+CELL: Final = _style("cell", 6.3)
+CELL_BOLD: Final = _style("cell bold", 6.3, bold=True)
+CELL_RIGHT: Final = _style("cell right", 6.3, alignment=2)
+CELL_RIGHT_BOLD: Final = _style("cell right bold", 6.3, bold=True, alignment=2)
 
 
 def text(words: object, style: Any = BODY) -> Any:
@@ -62,9 +63,9 @@ def cell(words: object, align: Align = "l", *, bold: bool = False) -> Any:
     return Paragraph(markup(str(words)), styles[bold, align == "r"])
 
 
-def part(title: str) -> list[Flowable]:
-    """The heading of a part of the report."""
-    return [text(title, PART)]
+def part(title: str, room: float = 140) -> list[Flowable]:
+    """The heading of a part of the report, with some of what follows on its page."""
+    return [CondPageBreak(room), text(title, PART)]
 
 
 def heading(title: str, room: float = 60) -> list[Flowable]:
@@ -79,7 +80,7 @@ def gap(height: float) -> Any:
 
 def table(
     head: Sequence[str], rows: Sequence[Sequence[object]], shares: Sequence[float], width: float,
-    align: str = "", bold_rows: Sequence[int] = (), groups: Sequence[int] = (),
+    align: str = "", bold_rows: Sequence[int] = (),
 ) -> Any:  # fmt: skip
     """A table whose head stands again on every page.
 
@@ -88,7 +89,6 @@ def table(
     shares : of the width, one for each column.
     align : one letter for each column, ``l`` or ``r``; left where it is short.
     bold_rows : rows to print bold.
-    groups : rows above which a stronger line stands.
     """
     sides: list[Align] = [("r" if k < len(align) and align[k] == "r" else "l") for k in range(len(head))]
     total = sum(shares)
@@ -102,7 +102,7 @@ def table(
     ]
     top = [cell(name, side, bold=True) for name, side in zip(head, sides, strict=True)]
     commands: list[tuple[Any, ...]] = [
-        ("FONT", (0, 0), (-1, -1), REGULAR, 6.6),
+        ("FONT", (0, 0), (-1, -1), REGULAR, 6.3),
         ("VALIGN", (0, 0), (-1, -1), "TOP"),
         ("VALIGN", (0, 0), (-1, 0), "BOTTOM"),
         ("BACKGROUND", (0, 0), (-1, 0), SHADED),
@@ -113,7 +113,7 @@ def table(
         ("RIGHTPADDING", (0, 0), (-1, -1), 2),
         ("TOPPADDING", (0, 0), (-1, -1), 1.4),
         ("BOTTOMPADDING", (0, 0), (-1, -1), 1.8),
-        *(("LINEABOVE", (0, row + 1), (-1, row + 1), 0.8, INK) for row in groups),
+        *(("LEFTPADDING", (k, 0), (k, -1), 6) for k in range(1, len(sides)) if sides[k - 1 : k + 1] == ["r", "l"]),
     ]
     return Table([top, *body], colWidths=widths, repeatRows=1, style=commands, hAlign="LEFT", splitInRow=1)
 
