@@ -55,7 +55,7 @@ def _table(
         "see",
     )  # fmt: skip
     levels = len(rating.levels)
-    shares = (14, 38, 36, 25, 54, 30, 26, 30, 28, 31, 31, 30, 30, 62, 34, 26, *(37,) * levels, 32, 24, 44, 24)
+    shares = (16, 38, 34, 24, 58, 30, 26, 30, 28, 30, 30, 30, 30, 68, 32, 25, *(37,) * levels, 32, 24, 44, 24)
     align = "r" + "llll" + "rrrrrrrr" + "ll" + "r" * (levels + 4) + "l"
     rows = [
         (number, *_bar(bar, rating, figures), ", ".join(marks.get((bar.truss, bar.bar), [])))
