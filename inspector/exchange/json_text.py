@@ -13,7 +13,7 @@ from collections import Counter
 from collections.abc import Iterator
 from typing import Any, Final, NoReturn, Self
 
-from inspector.exchange.form import Json, join
+from inspector.exchange.form import LARGEST_WHOLE, Json, join
 from models.errors import InputError, Problem
 
 LARGEST: Final = 20_000_000
@@ -97,8 +97,23 @@ def unusable(document: Json) -> Iterator[Problem]:
 
 
 def canonical_json(document: Json) -> bytes:
-    """UTF-8, keys sorted by their characters, no spaces, numbers as the shortest text that reads back the same."""
-    return json.dumps(document, ensure_ascii=False, sort_keys=True, separators=(",", ":"), allow_nan=False).encode()
+    """The one text that stands for a document.
+
+    UTF-8, keys sorted by their characters, no spaces, numbers as the shortest text that reads back the same: a
+    whole number has no decimal point however it was typed, as JSON knows no difference between 1 and 1.0.
+    """
+    plain = _plain(document)
+    return json.dumps(plain, ensure_ascii=False, sort_keys=True, separators=(",", ":"), allow_nan=False).encode()
+
+
+def _plain(value: Json) -> Json:
+    if isinstance(value, dict):
+        return {key: _plain(item) for key, item in value.items()}
+    if isinstance(value, list):
+        return [_plain(item) for item in value]
+    if isinstance(value, float) and abs(value) <= LARGEST_WHOLE and value.is_integer():
+        return int(value)
+    return value
 
 
 def _decoded(data: bytes | str, source: str) -> str:
