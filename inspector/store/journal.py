@@ -88,9 +88,9 @@ def add_entries(session: Session, bridge_id: str, visit_id: str, entries: list[E
 
 
 def next_sequence(session: Session, bridge_id: str, visit_id: str, device: str) -> int:
-    """One more than the last sequence of this device in this visit; 0 for its first entry."""
+    """One more than the last sequence of this device in this visit; 1 for its first entry."""
     mine = (EntryRow.bridge_id == bridge_id) & (EntryRow.visit_id == visit_id) & (EntryRow.device == device)
-    return _next(session, EntryRow.sequence, mine)
+    return _next(session, EntryRow.sequence, mine, first=1)
 
 
 def _add_calls(session: Session, bridge_id: str, stored: Visit, visit: Visit) -> None:
@@ -128,6 +128,6 @@ def _header(visit: Visit) -> Visit:
     return replace(visit, entries=(), calls=None, written=_UNWRITTEN)
 
 
-def _next(session: Session, column: InstrumentedAttribute[int], where: Any) -> int:
+def _next(session: Session, column: InstrumentedAttribute[int], where: Any, first: int = 0) -> int:
     last = session.scalar(select(func.max(column)).where(where))
-    return 0 if last is None else last + 1
+    return first if last is None else last + 1
