@@ -100,6 +100,7 @@ def report(rated: Rated) -> bytes:
 
     Imported here, so that rating alone does not load the PDF library.
     """
-    from inspector.report import make_report  # noqa: PLC0415 (see above)
+    from inspector.report import lowest_bars, make_report  # noqa: PLC0415 (see above)
 
-    return make_report(rated)
+    checks = [rated.hand_check(bar.truss, bar.bar) for bar in lowest_bars(rated.rating)]
+    return make_report(rated.rating, rated.bridge, rated.journal, rated.condition.bars, checks)

@@ -6,11 +6,10 @@ Numbers inside the program are SI floats; only here do they meet a unit again.
 from __future__ import annotations
 
 import math
-from collections.abc import Callable, Iterator
 from dataclasses import dataclass
 from typing import Final
 
-from models.calculation import Kind, Step, Traced
+from models.calculation import Kind
 from models.journal import CRACK_TAKEN_BACK, Entry, Reading
 
 CAUTION: Final = (
@@ -270,119 +269,6 @@ def no_state(number: int) -> str:
     """Bars without a recorded state."""
     verb = "has" if number == 1 else "have"
     return f"{count(number, 'bar')} {verb} no state on record and {'counts' if number == 1 else 'count'} as fair."
-
-
-# --- hand check ---
-
-HAND_DIGITS: Final = 5
-"""Significant digits of a hand check: enough to work each line again from what is printed."""
-
-_LOOSE, _SUM, _PRODUCT, _POWER, _ATOM = range(5)
-_RANKS: Final = {"+": _SUM, "-": _SUM, "minus": _SUM, "*": _PRODUCT, "/": _PRODUCT, "^": _POWER}
-_RELATION_SIGNS: Final = {"<": "<", "<=": "≤", ">": ">", ">=": "≥"}
-
-_CONSTANTS: Final = {math.pi: "π", math.pi**2: "π²"}
-
-_Leaf = Callable[[Traced], tuple[str, int]]
-
-
-def is_computed(step: Step) -> bool:
-    """Whether a line has a formula; one that was given stands for itself."""
-    return not (step.expression.operation == "symbol" and step.expression.symbol == step.symbol)
-
-
-def formula(step: Step) -> str:
-    """The right side of a line in symbols, as ``0.658^(Po/Pe) · Po``."""
-    return _tree(step.expression, _symbol)[0]
-
-
-def numbers(step: Step, figures: Figures) -> str:
-    """The same with the numbers put in, each with its unit."""
-
-    def leaf(node: Traced) -> tuple[str, int]:
-        return _number(node, figures)
-
-    return _tree(step.expression, leaf)[0]
-
-
-def value(step: Step, figures: Figures) -> str:
-    """The result of a line with its unit."""
-    return _plain(step.value, step.kind, figures)
-
-
-def reasons(step: Step, figures: Figures) -> tuple[str, ...]:
-    """Why a formula was taken where there is a choice, as ``Pe/Po = 0.62 ≥ 0.44``."""
-    return tuple(_reason(node, figures) for node in _walk(step.expression) if node.because)
-
-
-def _reason(node: Traced, figures: Figures) -> str:
-    if node.because is None:
-        return ""
-    sides = []
-    for side in (node.because[0], node.because[2]):
-        name, put_in = _tree(side, _symbol)[0], _plain(side.value, side.kind, figures)
-        sides.append((name, put_in))
-    (left, left_value), (right, right_value) = sides
-    first = left_value if left == left_value else f"{left} = {left_value}"
-    second = right_value if right == right_value else f"{right} = {right_value}"
-    return f"{first} {_RELATION_SIGNS[node.because[1]]} {second}"
-
-
-def _walk(node: Traced) -> Iterator[Traced]:
-    yield node
-    for operand in node.operands:
-        yield from _walk(operand)
-
-
-def _plain(number: float, kind: Kind, figures: Figures) -> str:
-    unit = figures.unit(kind)
-    digits = significant(figures.scaled(number, kind), HAND_DIGITS)
-    if "." in digits:
-        digits = digits.rstrip("0").rstrip(".")
-    return f"{digits} {unit}".rstrip().replace("-", "−")
-
-
-def _symbol(node: Traced) -> tuple[str, int]:
-    if node.operation == "symbol":
-        return node.symbol, _ATOM if node.symbol.isalnum() else _PRODUCT
-    if node.value in _CONSTANTS:
-        return _CONSTANTS[node.value], _ATOM
-    return _plain(node.value, "factor", Figures()), _ATOM if node.value >= 0 else _LOOSE
-
-
-def _number(node: Traced, figures: Figures) -> tuple[str, int]:
-    text = _plain(node.value, node.kind if node.operation == "symbol" else "factor", figures)
-    if node.value < 0:
-        return text, _LOOSE
-    return text, _PRODUCT if " " in text else _ATOM
-
-
-def _tree(node: Traced, leaf: _Leaf) -> tuple[str, int]:
-    """A tree as text, with how loosely it holds together."""
-    if node.operation in ("symbol", "number"):
-        return leaf(node)
-    parts = [_tree(operand, leaf) for operand in node.operands]
-    if node.operation == "root":
-        return f"√({parts[0][0]})", _ATOM
-    if node.operation in ("least", "greatest"):
-        return f"{node.operation} of ({'; '.join(text for text, _ in parts)})", _ATOM
-    rank = _RANKS[node.operation]
-    if node.operation == "minus":
-        return f"−{_held(parts[0], _PRODUCT)}", _LOOSE
-    left, right = parts
-    if node.operation == "^":
-        return f"{_held(left, _ATOM)}^{_held(right, _ATOM)}", rank
-    if node.operation == "/":
-        return f"{_held(left, _POWER)}/{_held(right, _POWER)}", rank
-    if node.operation == "*":
-        return f"{_held(left, _PRODUCT)} · {_held(right, _PRODUCT)}", rank
-    sign = {"+": "+", "-": "−"}[node.operation]
-    return f"{_held(left, _SUM)} {sign} {_held(right, _PRODUCT)}", rank
-
-
-def _held(part: tuple[str, int], rank: int) -> str:
-    """A part in parentheses where it would fall apart beside a stronger sign."""
-    return part[0] if part[1] >= rank else f"({part[0]})"
 
 
 # --- condition ---

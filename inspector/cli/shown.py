@@ -11,7 +11,7 @@ from rich.table import Table
 from rich.text import Text
 
 from inspector.desk import Rated
-from models import words
+from models import formula, words
 from models.finding import Finding
 from models.rating import BarCheck
 from models.rating.result import BarRating, Governing, Rating, TrussRating
@@ -151,14 +151,14 @@ def hand_check_of(out: Console, rated: Rated, check: BarCheck) -> None:
     for step in check.steps:
         out.print()
         out.print(Text(f"{step.title}" + (f"  [{step.source}]" if step.source else ""), style="dim"))
-        for reason in words.reasons(step, figures):
+        for reason in formula.reasons(step, figures):
             out.print(Text(f"  {reason}"))
-        if words.is_computed(step):
-            out.print(Text(f"  {step.symbol} = {words.formula(step)}"))
-            out.print(Text(f"  {' ' * len(step.symbol)} = {words.numbers(step, figures)}"))
-            out.print(Text(f"  {' ' * len(step.symbol)} = {words.value(step, figures)}", style="bold"))
+        if formula.is_computed(step):
+            out.print(Text(f"  {step.symbol} = {formula.in_symbols(step)}"))
+            out.print(Text(f"  {' ' * len(step.symbol)} = {formula.in_numbers(step, figures)}"))
+            out.print(Text(f"  {' ' * len(step.symbol)} = {formula.result(step, figures)}", style="bold"))
         else:
-            out.print(Text(f"  {step.symbol} = {words.value(step, figures)}"))
+            out.print(Text(f"  {step.symbol} = {formula.result(step, figures)}"))
     if check.remark:
         out.print()
         out.print(Text(check.remark, style="bold"))

@@ -6,16 +6,16 @@ from collections.abc import Mapping, Sequence
 
 from reportlab.platypus import Flowable
 
+from inspector.report.findings import Place, Told, marks_by_bar
 from inspector.report.style import NOTE, heading, part, table, text
 from models import words
-from models.finding import Finding
 from models.rating.result import BarRating, Effect, Rating, TrussRating
 from models.words import Figures
 
 
-def bars(rating: Rating, findings: Sequence[Finding], figures: Figures, width: float) -> list[Flowable]:
+def bars(rating: Rating, findings: Sequence[Told], figures: Figures, width: float) -> list[Flowable]:
     """All bars of all trusses."""
-    marks = _marks(findings)
+    marks = marks_by_bar(findings)
     story = part("All bars")
     for name, truss in rating.trusses.items():
         story += heading(f"Truss {name}", 90)
@@ -35,16 +35,8 @@ _NOTES = (
 )
 
 
-def _marks(findings: Sequence[Finding]) -> Mapping[tuple[str, str], list[str]]:
-    found: dict[tuple[str, str], list[str]] = {}
-    for number, finding in enumerate(findings, 1):
-        if finding.truss and finding.bar:
-            found.setdefault((finding.truss, finding.bar), []).append(f"F{number}")
-    return found
-
-
 def _table(
-    rating: Rating, rated: TrussRating, marks: Mapping[tuple[str, str], list[str]], figures: Figures,
+    rating: Rating, rated: TrussRating, marks: Mapping[Place, str], figures: Figures,
     width: float,
 ) -> Flowable:  # fmt: skip
     force, area = figures.unit("force"), figures.unit("area")
@@ -55,10 +47,10 @@ def _table(
         "see",
     )  # fmt: skip
     levels = len(rating.levels)
-    shares = (16, 38, 34, 24, 58, 30, 26, 30, 28, 30, 30, 30, 30, 68, 32, 25, *(37,) * levels, 32, 24, 44, 24)
+    shares = (15, 38, 38, 24, 57, 28, 25, 28, 27, 28, 28, 28, 28, 66, 32, 28, *(40,) * levels, 29, 23, 44, 36)
     align = "r" + "llll" + "rrrrrrrr" + "ll" + "r" * (levels + 4) + "l"
     rows = [
-        (number, *_bar(bar, rating, figures), ", ".join(marks.get((bar.truss, bar.bar), [])))
+        (number, *_bar(bar, rating, figures), marks.get((bar.truss, bar.bar), ""))
         for number, bar in enumerate(rated.bars, 1)
     ]
     low = [number for number, bar in enumerate(rated.bars) if _below_one(bar, rating.upper_level)]

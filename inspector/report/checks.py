@@ -10,7 +10,7 @@ from reportlab.platypus import Flowable, Paragraph
 from inspector.report.fonts import markup
 from inspector.report.result_page import stations
 from inspector.report.style import BODY, CELL, STRONG, heading, part, table, text
-from models import words
+from models import formula
 from models.calculation import Step
 from models.rating.hand_check import BarCheck
 from models.rating.result import BarRating, Rating
@@ -47,13 +47,13 @@ def _title(place: tuple[str, str], bar: BarRating | None) -> str:
 
 
 def _line(step: Step, figures: Figures) -> Paragraph:
-    result = markup(words.value(step, figures))
-    if not words.is_computed(step):
+    result = markup(formula.result(step, figures))
+    if not formula.is_computed(step):
         return Paragraph(f"<b>{markup(step.symbol)}</b> = <b>{result}</b>", CELL)
-    formula, numbers = words.formula(step), words.numbers(step, figures)
-    rows = [f"<b>{markup(step.symbol)}</b> = {markup(formula)}"]
-    if numbers != formula:
+    symbols, numbers = formula.in_symbols(step), formula.in_numbers(step, figures)
+    rows = [f"<b>{markup(step.symbol)}</b> = {markup(symbols)}"]
+    if numbers != symbols:
         rows.append(f"&nbsp;&nbsp;= {markup(numbers)}")
     rows[-1] += f" = <b>{result}</b>"
-    rows += [f"&nbsp;&nbsp;as {markup(reason)}" for reason in words.reasons(step, figures)]
+    rows += [f"&nbsp;&nbsp;as {markup(reason)}" for reason in formula.reasons(step, figures)]
     return Paragraph("<br/>".join(rows), CELL)

@@ -18,6 +18,7 @@ from inspector.report.bars import bars
 from inspector.report.checks import checks
 from inspector.report.cover import STATUS, cover
 from inspector.report.elevation import elevations
+from inspector.report.findings import Told, all_told
 from inspector.report.fonts import BOLD, REGULAR, register, visible
 from inspector.report.loads import loads, model
 from inspector.report.readings import readings
@@ -26,7 +27,6 @@ from inspector.report.review import findings_and_assumptions, review
 from inspector.report.style import FOOT, HAIR, HEAD, MARGIN, SMALL, page_size, text
 from models.bridge import Footbridge
 from models.condition import BarCondition
-from models.finding import LEVELS, Finding
 from models.journal import Journal
 from models.rating.hand_check import BarCheck
 from models.rating.result import Rating
@@ -53,7 +53,7 @@ def make_report(
     """
     register()
     width, height = page_size(bridge.units)
-    findings = ordered_findings(rating, conditions)
+    findings = all_told(rating, conditions)
     story = _story(rating, bridge, journal, findings, hand_checks, (width, height))
     target = BytesIO()
     document = BaseDocTemplate(
@@ -74,16 +74,8 @@ def _template(name: str, width: float, height: float) -> Any:
     return PageTemplate(name, [frame], pagesize=(width, height))
 
 
-def ordered_findings(rating: Rating, conditions: Mapping[tuple[str, str], BarCondition]) -> list[Finding]:
-    """All findings once, the most urgent first; each keeps its number through the report."""
-    at_bars = [finding for bar in rating.bars for finding in bar.findings]
-    recorded = [finding for condition in conditions.values() for finding in condition.findings]
-    every = [*rating.findings, *at_bars, *recorded]
-    return sorted(dict.fromkeys(every), key=lambda finding: LEVELS.index(finding.level))
-
-
 def _story(
-    rating: Rating, bridge: Footbridge, journal: Journal, findings: Sequence[Finding], hand_checks: Sequence[BarCheck],
+    rating: Rating, bridge: Footbridge, journal: Journal, findings: Sequence[Told], hand_checks: Sequence[BarCheck],
     page: tuple[float, float],
 ) -> list[Flowable]:  # fmt: skip
     figures = Figures(bridge.units or "SI")

@@ -3,12 +3,13 @@
 from __future__ import annotations
 
 from collections.abc import Mapping, Sequence
+from dataclasses import replace
 
 from reportlab.platypus import Flowable
 
+from inspector.report.findings import Told, marks_by_bar
 from inspector.report.style import BODY, NOTE, heading, part, table, text
 from models import words
-from models.finding import Finding
 from models.journal import Bow, Crack, Entry, Journal, Reading, Visit
 from models.journal_order import by_date, standing
 from models.words import Figures
@@ -17,7 +18,7 @@ Marks = Mapping[str, str]
 """Entry id -> what has to be said beside it."""
 
 
-def readings(journal: Journal, findings: Sequence[Finding], figures: Figures, width: float) -> list[Flowable]:
+def readings(journal: Journal, findings: Sequence[Told], figures: Figures, width: float) -> list[Flowable]:
     """All visits, the oldest first."""
     story = part("What was recorded")
     if not journal.visits:
@@ -27,6 +28,7 @@ def readings(journal: Journal, findings: Sequence[Finding], figures: Figures, wi
         story += heading(f"Visit of {visit.date}", 80)
         story.append(text(_about(visit), BODY))
         story += _readings(visit, marks, figures, width)
+        story += _looks(visit, marks, width)
         story += _entries(visit, marks, width)
         story += _calls(visit, width)
     story.append(text(_NOTES, NOTE))
@@ -49,17 +51,14 @@ def _about(visit: Visit) -> str:
     return "; ".join(said) + "."
 
 
-def _marks(journal: Journal, findings: Sequence[Finding]) -> Marks:
-    doubts: dict[tuple[str | None, str | None], list[str]] = {}
-    for number, finding in enumerate(findings, 1):
-        if finding.level == "doubtful":
-            doubts.setdefault((finding.truss, finding.bar), []).append(f"F{number}")
+def _marks(journal: Journal, findings: Sequence[Told]) -> Marks:
+    doubts = marks_by_bar(findings, "doubtful")
     stands = {placed.entry.id for record in standing(journal).records.values() for placed in record.entries}
     marks = {}
     for visit in journal.visits:
         for entry in visit.entries:
             doubted = doubts.get((entry.truss, entry.bar))
-            said = "doubt " + ", ".join(doubted) if doubted else ""
+            said = f"doubt {doubted}" if doubted and not _only_looked(entry) else ""
             marks[entry.id] = said if entry.id in stands else "retracted"
     return marks
 
@@ -96,21 +95,46 @@ def _cleaned(reading: Reading) -> str:
     return {True: "yes", False: "no", None: "not recorded"}[reading.cleaned]
 
 
+def _only_looked(entry: Entry) -> bool:
+    """Whether an entry says nothing but how the bar was seen, and in which state."""
+    plain = replace(entry, seen=None, state=None, look_unchanged=None)
+    return not (_facts(plain) or plain.readings or plain.reason or plain.note or plain.photos)
+
+
+def _looks(visit: Visit, marks: Marks, width: float) -> list[Flowable]:
+    """Bars that were only looked at, together where they were found alike."""
+    alike: dict[tuple[str, str, str, str], dict[str, None]] = {}
+    for entry in visit.entries:
+        if _only_looked(entry):
+            change = "no change since the visit before" if entry.look_unchanged else ""
+            key = (entry.truss, entry.seen or "", entry.state or "", "; ".join(filter(None, (change, marks[entry.id]))))
+            alike.setdefault(key, {})[entry.bar] = None
+    if not alike:
+        return []
+    rows = [(truss, seen, state, change, ", ".join(bars)) for (truss, seen, state, change), bars in alike.items()]
+    head = ("truss", "seen", "state", "remark", "bars")
+    return [text("Bars looked at", NOTE), table(head, rows, (4, 4, 2.5, 6, 30), width)]
+
+
 def _entries(visit: Visit, marks: Marks, width: float) -> list[Flowable]:
-    """Everything but thickness."""
+    """Everything else but thickness."""
     head = ("truss", "bar", "seen", "state", "recorded", "note", "photographs", "when", "mark")
     rows = [
         (
             entry.truss, entry.bar, _seen(entry), entry.state or "", "; ".join(_facts(entry)), entry.note or "",
-            ", ".join(photo.file for photo in entry.photos or ()), entry.at or "",
-            marks[entry.id],
+            ", ".join(photo.file for photo in entry.photos or ()), entry.at or visit.date, marks[entry.id],
         )
         for entry in visit.entries
-        if not entry.readings or _facts(entry) or entry.seen or entry.state or entry.note or entry.photos
+        if not _only_looked(entry) and not _only_read(entry)
     ]  # fmt: skip
     if not rows:
         return []
     return [text("Other entries", NOTE), table(head, rows, (4, 4, 6, 2.6, 8, 8, 5, 6, 3.4), width)]
+
+
+def _only_read(entry: Entry) -> bool:
+    """Whether an entry holds readings alone."""
+    return bool(entry.readings) and _only_looked(replace(entry, readings=None)) and not (entry.seen or entry.state)
 
 
 def _seen(entry: Entry) -> str:

@@ -7,9 +7,9 @@ from typing import Final
 
 from reportlab.platypus import Flowable
 
+from inspector.report.findings import Told
 from inspector.report.style import BODY, FIGURE, STRONG, gap, heading, part, table, text
 from models import words
-from models.finding import Finding
 from models.rating.result import BarRating, Governing, Rating
 from models.views import GONE
 from models.words import Figures
@@ -29,19 +29,13 @@ def lowest_bars(rating: Rating, number: int = GOVERNING) -> tuple[BarRating, ...
     return tuple(row[3] for row in sorted(carrying, key=lambda row: row[:3])[:number])
 
 
-def place_of(finding: Finding) -> str:
-    """Which truss and bar a finding is about."""
-    named = [f"truss {finding.truss}" if finding.truss else "", f"bar {finding.bar}" if finding.bar else ""]
-    return ", ".join(name for name in named if name) or "the bridge"
-
-
-def result_page(rating: Rating, findings: Sequence[Finding], figures: Figures, width: float) -> list[Flowable]:
+def result_page(rating: Rating, findings: Sequence[Told], figures: Figures, width: float) -> list[Flowable]:
     """One page, read by somebody who may read no other."""
     story = part("Result")
     urgent = [finding for finding in findings if finding.level == "act now"]
     if urgent:
         story += heading("Act now")
-        rows = [(place_of(finding), finding.text) for finding in urgent[:_MOST_URGENT]]
+        rows = [(finding.where, finding.text) for finding in urgent[:_MOST_URGENT]]
         story.append(table(("where", "what"), rows, (1, 4), width, bold_rows=range(len(rows))))
         if len(urgent) > _MOST_URGENT:
             story.append(text(f"and {len(urgent) - _MOST_URGENT} more, all in the list of findings", BODY))

@@ -9,22 +9,21 @@ from typing import Any, Final
 from reportlab.lib.units import mm
 from reportlab.platypus import Flowable, KeepTogether, Table
 
+from inspector.report.findings import Told
 from inspector.report.fonts import REGULAR
-from inspector.report.result_page import place_of
 from inspector.report.style import BODY, CELL, INK, SMALL, gap, heading, numbered, part, table, text
 from models.bridge import Footbridge, Override, Recommendation
-from models.finding import Finding
 from models.rating.result import Rating
 
 
 def findings_and_assumptions(
-    rating: Rating, bridge: Footbridge, findings: Sequence[Finding], width: float
+    rating: Rating, bridge: Footbridge, findings: Sequence[Told], width: float
 ) -> list[Flowable]:
     """Everything that a reader has to know beside the figures."""
     story = part("Findings and assumptions")
     story += heading("Findings")
-    rows = [(f"F{k}", one.level, place_of(one), one.text) for k, one in enumerate(findings, 1)]
-    story.append(table(("no.", "level", "where", "what"), rows, (1, 2, 4, 12), width) if rows else text("None.", BODY))
+    rows = [(one.mark, one.level, one.where, one.text) for one in findings]
+    story.append(table(("no.", "level", "where", "what"), rows, (1, 2, 6, 10), width) if rows else text("None.", BODY))
     story += heading("Assumptions")
     story += numbered(rating.assumptions, "A") or [text("None.", BODY)]
     if bridge.overrides:
@@ -59,7 +58,7 @@ def _recommendations(recommendations: Sequence[Recommendation], width: float) ->
          one.proof or "")
         for one in recommendations
     ]  # fmt: skip
-    return table(head, rows, (2, 2, 8, 2.5, 3, 3, 3), width)
+    return table(head, rows, (2, 3.4, 8, 2.8, 3, 3, 3), width)
 
 
 _LINES: Final = (
