@@ -11,7 +11,6 @@ from collections.abc import Callable
 from typing import Final
 
 import numpy as np
-from numpy.typing import NDArray
 
 from models.calculation import Array, NoSheet
 from models.rating.fitted import Stock
@@ -23,6 +22,7 @@ MOST: Final = 0.95
 """No larger loss is looked at."""
 
 _PRECISION: Final = 1e-10
+_MOST_STEPS: Final = 100
 
 
 def loss_allowance(
@@ -60,12 +60,11 @@ def loss_allowance(
 def _tension(stock: Stock, capacity: Array, demand: Array, redundancy: Array) -> Array:
     """Remaining part of the thickness at which tension governs; 0 where it never does.
 
-    The resistance follows the area, so a (1 - r) + r = demand/capacity at the limit, with a the area's part.
+    The resistance follows the area.
     """
     used = np.divide(demand, capacity, out=np.ones_like(demand), where=capacity > 0)
-    shed = 1 - redundancy
-    area = np.divide(used - redundancy, shed, out=np.zeros_like(used), where=shed > _PRECISION)
-    return np.where(demand > 0, np.clip(area, 0.0, 1.0) ** (1 / stock.whole_bar_exponent), 0.0)
+    area = _area_at_limit(used, redundancy)
+    return np.where(demand > 0, area ** (1 / stock.whole_bar_exponent), 0.0)
 
 
 def _compression(
@@ -95,63 +94,50 @@ def _compression(
         member = member_of(stock, owner, found, effective_lengths)
         resistance = np.minimum.reduceat(basis.resistances(member, NoSheet())[-1].flexural_buckling, first)
         area = part**exponent
-        return factor[bars] * resistance * (area * (1 - shed) + shed) / area - demand[bars]
+        return factor[bars] * resistance * (area * (1 - shed) + shed) / (area * demand[bars]) - 1
 
-    least = np.full(len(bars), 1 - MOST)
-    spare_at_least = spare(least)
-    reaches = spare_at_least < 0
-    found = find_root(spare, least, np.ones(len(bars)), spare_at_least, capacity[bars] - demand[bars])
-    remaining[bars] = np.where(reaches, found, 0.0)
+    # Thinner plates never raise the stress that a strut bears, so the limit lies above the one of its area alone.
+    low = np.clip(_area_at_limit(demand[bars] / capacity[bars], shed) ** (1 / exponent), 1 - MOST, 1.0)
+    at_low = spare(low)
+    found = find_root(spare, low, np.ones(len(bars)), at_low, capacity[bars] / demand[bars] - 1)
+    remaining[bars] = np.where(at_low < 0, found, np.where(low > 1 - MOST, low, 0.0))
     return remaining
 
 
+def _area_at_limit(used: Array, redundancy: Array) -> Array:
+    """Remaining part a of the area at which a (1 - r) + r = demand/capacity; 0 where the bar sheds all it must."""
+    shed = 1 - redundancy
+    area = np.divide(used - redundancy, shed, out=np.zeros_like(used), where=shed > _PRECISION)
+    return np.clip(area, 0.0, 1.0)
+
+
 def find_root(function: Callable[[Array], Array], low: Array, high: Array, at_low: Array, at_high: Array) -> Array:
-    """Roots of many rising functions at once, by bracketing and inverse quadratic interpolation.
+    """Roots of many continuous functions at once, by regula falsi with the end that stays brought down.
 
     Parameters
     ----------
-    function : (n,) -> (n,). low, high : (n,) brackets, with the values there. Where the signs at both ends are
-        the same the answer has no meaning.
+    function : (n,) -> (n,), of the order of one. low, high : (n,) brackets, with the values there. Where the signs
+        at both ends are the same the answer has no meaning.
+
+    Returns
+    -------
+    (n,) places where the function is within 1e-10 of zero, or known to 1e-10.
 
     References
     ----------
-    Chandrupatla, "A new hybrid quadratic/bisection algorithm for finding the zero of a nonlinear function
-    without using derivatives", Advances in Engineering Software 28, 1997.
+    Anderson and Bjorck, "A new high order method of regula falsi type for computing a root of an equation", BIT 13,
+    1973.
     """
-    best, other, third = high.copy(), low.copy(), low.copy()
-    f_best, f_other, f_third = at_high.copy(), at_low.copy(), at_low.copy()
-    step = _first_step(f_best, f_other)
-    for _ in range(60):
-        trial = best + step * (other - best)
+    kept, f_kept, last, f_last = low, at_low, high, at_high
+    for _ in range(_MOST_STEPS):
+        slope = f_last - f_kept
+        trial = last - np.divide(f_last * (last - kept), slope, out=np.zeros_like(last), where=slope != 0)
         f_trial = function(trial)
-        same = np.sign(f_trial) == np.sign(f_best)
-        third, f_third = np.where(same, best, other), np.where(same, f_best, f_other)
-        other, f_other = np.where(same, other, best), np.where(same, f_other, f_best)
-        best, f_best = trial, f_trial
-        if (np.minimum(np.abs(other - best), np.where(f_best == 0, 0.0, 1.0)) <= _PRECISION).all():
-            break
-        step = _next_step(best, other, third, f_best, f_other, f_third)
-    return np.where(np.abs(f_other) < np.abs(f_best), other, best)
-
-
-def _first_step(f_best: Array, f_other: Array) -> Array:
-    """Where the straight line through both ends crosses zero; the middle where it does not."""
-    difference = f_best - f_other
-    with np.errstate(divide="ignore", invalid="ignore"):
-        step = np.where(difference != 0, f_best / difference, 0.5)
-    return np.where((step > 0) & (step < 1), step, 0.5)
-
-
-def _next_step(best: Array, other: Array, third: Array, f_best: Array, f_other: Array, f_third: Array) -> Array:
-    """Inverse quadratic interpolation where it is sure to stay inside, bisection elsewhere."""
-    with np.errstate(divide="ignore", invalid="ignore"):
-        xi = (best - other) / (third - other)
-        phi = (f_best - f_other) / (f_third - f_other)
-        trusted: NDArray[np.bool_] = (phi**2 < xi) & ((1 - phi) ** 2 < 1 - xi)
-        quadratic = f_best / (f_other - f_best) * f_third / (f_other - f_third) + (third - best) / (
-            other - best
-        ) * f_best / (f_third - f_best) * f_other / (f_third - f_other)
-        closest = _PRECISION / np.abs(other - best)
-    step = np.where(trusted & np.isfinite(quadratic), quadratic, 0.5)
-    closest = np.minimum(np.nan_to_num(closest, nan=0.5, posinf=0.5), 0.5)
-    return np.clip(step, closest, 1 - closest)
+        if (np.minimum(np.abs(f_trial), np.abs(trial - last)) <= _PRECISION).all():
+            return trial
+        crossed = np.sign(f_trial) != np.sign(f_last)
+        ratio = 1 - np.divide(f_trial, f_last, out=np.ones_like(f_last), where=f_last != 0)
+        brought_down = f_kept * np.where(ratio > 0, ratio, 0.5)
+        kept, f_kept = np.where(crossed, last, kept), np.where(crossed, f_last, brought_down)
+        last, f_last = trial, f_trial
+    return last

@@ -11,7 +11,7 @@ from models.condition import BarCondition, Profile
 from models.rating.answer import joint_dead_load
 from models.rating.prepare import Prepared, PreparedTruss, Standing
 from models.rating.solved import Solved, Task, solve_state, worse
-from models.rating.strength import Strength, strength_of
+from models.rating.strength import Strength, padded, strength_of
 from models.resistance.protocol import Basis
 from models.section import properties
 
@@ -149,18 +149,15 @@ def _flexibilities(task: Task, conditions: tuple[BarCondition, ...]) -> tuple[Ar
 
 def _flexibility(task: Task, profiles: list[Profile], evaluated: list[Profile]) -> Array:
     stock, pieces = task.stock, task.strength.pieces
+    counts = [len(profile.thickness) for profile in profiles]
+    owner = np.repeat(np.arange(len(profiles)), counts)
     if all(profile is known for profile, known in zip(profiles, evaluated, strict=True)):
-        owner, area = pieces.owner, task.strength.section.area
+        area = task.strength.section.area
     else:
-        owner = np.repeat(np.arange(len(profiles)), [len(profile.thickness) for profile in profiles])
-        thickness = np.zeros((len(owner), stock.stack.shape[1]))
-        start = 0
-        for profile in profiles:
-            rows, plates = profile.thickness.shape
-            thickness[start : start + rows, :plates] = profile.thickness
-            start += rows
+        thickness = padded([profile.thickness for profile in profiles], pieces.thickness.shape[1])
         area = properties(stock.stack.take(owner), thickness).area
-    parts = np.concatenate([np.diff(profile.stations) for profile in profiles])
+    steps = np.diff(np.concatenate([profile.stations for profile in profiles]))
+    parts = np.delete(steps, np.cumsum(np.array(counts) + 1)[:-1] - 1)
     with np.errstate(divide="ignore", invalid="ignore"):
         share = np.where(parts > 0, parts / area, 0.0)
     return np.bincount(owner, weights=share) * task.prepared.geometry.lengths / stock.E

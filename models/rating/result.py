@@ -4,24 +4,24 @@ from __future__ import annotations
 
 from collections.abc import Mapping
 from dataclasses import dataclass
-from typing import Literal
+from typing import Literal, NamedTuple
 
 from models.finding import Finding
 from models.resistance.protocol import FactorLine
 from models.statics.stability import Verdict
 
 
-@dataclass(frozen=True, slots=True)
-class Effect:
+class Effect(NamedTuple):
     """The largest tension and the largest compression (negative) that a load gives, N, unfactored."""
 
     maximum: float
     minimum: float
 
 
-@dataclass(frozen=True, slots=True)
-class BarRating:
+class BarRating(NamedTuple):
     """One bar's figures. ``None`` where a figure does not exist.
+
+    A named tuple, as a rating makes one for every bar after every reading.
 
     Parameters
     ----------

@@ -4,14 +4,15 @@ from __future__ import annotations
 
 import math
 from collections.abc import Mapping
-from typing import Final, Literal
+from typing import Any, Final, Literal
 
 import numpy as np
+from numpy.typing import NDArray
 
-from models.condition import BarCondition
 from models.finding import Finding
 from models.rating.outcome import Outcome
 from models.rating.result import BarRating, Effect, Reaction
+from models.rating.solved import Figures
 from models.rating.strength import CHECKS
 
 _DIRECTIONS: Final[tuple[Literal["tension", "compression"], ...]] = ("tension", "compression")
@@ -24,183 +25,187 @@ def rows_of(outcome: Outcome, findings: Mapping[str, tuple[Finding, ...]]) -> tu
     ----------
     findings : by bar.
     """
-    table = _columns(outcome)
-    bars = outcome.prepared.truss.bars
-    return tuple(
-        _row(outcome, number, bar.id, bar.role, now, cells, findings.get(bar.id, ()))
-        for number, (bar, now, cells) in enumerate(zip(bars, outcome.conditions, table, strict=True))
-    )
+    table = _Table(outcome)
+    columns = {**table.identity(findings), **table.strength(), **table.forces(), **table.governing()}
+    in_order: list[list[Any]] = [columns[name] for name in BarRating._fields]
+    return tuple(BarRating._make(cells) for cells in zip(*in_order, strict=True))
 
 
-def _columns(outcome: Outcome) -> list[tuple[float, ...]]:
-    """Per bar: area, nominal area, length, resistances, checks, condition factors, system factor, least piece."""
-    strength = outcome.task.strength
-    columns = [
-        strength.area,
-        outcome.task.stock.area,
-        outcome.prepared.geometry.lengths,
-        *strength.resistance[-1],
-        *strength.check,
-        *outcome.condition_factor,
-        outcome.system_factor,
-        strength.least,
-        *strength.piece,
-    ]
-    return list(zip(*[column.tolist() for column in columns], strict=True))
+_Columns = Mapping[str, list[Any]]
 
 
-def _row(
-    outcome: Outcome,
-    number: int,
-    bar: str,
-    role: str,
-    now: BarCondition,
-    cells: tuple[float, ...],
-    findings: tuple[Finding, ...],
-) -> BarRating:
-    area, nominal, length, tension, compression, *rest = cells
-    tension_check, compression_check, *rest = rest
-    condition_tension, condition_compression, system, least, *pieces = rest
-    gone = number in outcome.severed or number in outcome.cracked
-    figures = _Bar(outcome, number)
-    direction = None if gone else figures.direction
-    piece = int(least if direction is None else pieces[direction])
-    condition = (condition_tension, condition_compression)[direction or 0]
-    names = CHECKS[int(tension_check)], CHECKS[int(compression_check)]
-    return BarRating(
-        truss=outcome.name,
-        bar=bar,
-        role=role,
-        section=now.section,
-        length=length,
-        state=now.state,
-        known=_known(outcome, now, piece),
-        area=0.0 if number in outcome.severed else area,
-        nominal_area=nominal,
-        dead_components=figures.dead(0),
-        dead_wearing=figures.dead(1),
-        live=figures.live(),
-        tension=tension,
-        compression=compression,
-        tension_check=names[0],
-        compression_check=names[1],
-        condition_factor=_number(condition),
-        system_factor=_number(system),
-        rating_factor=figures.gone() if gone else figures.rating_factor(),
-        check=_check(outcome, number, direction, names, figures),
-        load=None if gone else figures.load,
-        direction=None if direction is None else _DIRECTIONS[direction],
-        where=_where(outcome, number, piece),
-        demand=None if direction is None else figures.demand(direction),
-        capacity=None if direction is None else (tension, compression)[direction] * figures.factor(direction),
-        loss_allowance=0.0 if gone else figures.allowance(),
-        without_it=figures.lowest_of_all() if gone else figures.without(),
-        findings=findings,
-    )
+class _Table:
+    """The rows' fields by column, (m,) each; a value that does not exist is None."""
+
+    def __init__(self, outcome: Outcome) -> None:
+        self.outcome = outcome
+        self.count = len(outcome.conditions)
+        self.figures = outcome.solved.figures if outcome.solved else None
+        self.loads = outcome.solved.answer.loads if outcome.solved else ()
+        self.gone = np.zeros(self.count, bool)
+        self.gone[sorted(outcome.severed | outcome.cracked)] = True
+        self.direction = self._direction()
+        self.piece = self._piece()
+
+    def _direction(self) -> NDArray[np.int64]:
+        """What governs: 0 tension, 1 compression, -1 nothing."""
+        if self.figures is None:
+            return np.full(self.count, -1)
+        rated = np.isfinite(self.figures.lowest[-1]) & ~self.gone
+        return np.where(rated, self.figures.direction, -1)
+
+    def _piece(self) -> NDArray[np.int64]:
+        """The piece of the bar that governs, or the one of least area."""
+        strength = self.outcome.task.strength
+        chosen: NDArray[np.int64] = np.choose(self.direction + 1, [strength.least, *strength.piece])
+        return chosen
+
+    def identity(self, findings: Mapping[str, tuple[Finding, ...]]) -> _Columns:
+        """Names, what is known, and what there is to find."""
+        bars, conditions = self.outcome.prepared.truss.bars, self.outcome.conditions
+        measured = self.outcome.task.strength.pieces.measured[self.piece].tolist()
+        known = [
+            "measured" if raised and now.seen else now.known for now, raised in zip(conditions, measured, strict=True)
+        ]
+        return {
+            "truss": [self.outcome.name] * self.count,
+            "bar": [bar.id for bar in bars],
+            "role": [bar.role for bar in bars],
+            "section": [now.section for now in conditions],
+            "state": [now.state for now in conditions],
+            "known": list(known),
+            "findings": [findings.get(bar.id, ()) for bar in bars],
+        }
+
+    def strength(self) -> _Columns:
+        """Sizes, resistances and the factors on them."""
+        outcome, strength = self.outcome, self.outcome.task.strength
+        severed = np.zeros(self.count, bool)
+        severed[sorted(outcome.severed)] = True
+        condition = np.where(self.direction == 1, outcome.condition_factor[1], outcome.condition_factor[0])
+        tension, compression = strength.check.tolist()
+        return {
+            "length": outcome.prepared.geometry.lengths.tolist(),
+            "area": np.where(severed, 0.0, strength.area).tolist(),
+            "nominal_area": outcome.task.stock.area.tolist(),
+            "tension": strength.resistance[-1, 0].tolist(),
+            "compression": strength.resistance[-1, 1].tolist(),
+            "tension_check": [CHECKS[check] for check in tension],
+            "compression_check": [CHECKS[check] for check in compression],
+            "condition_factor": _cells(condition),
+            "system_factor": _cells(outcome.system_factor),
+            "where": self._where(),
+        }
+
+    def _where(self) -> list[Any]:
+        conditions = self.outcome.conditions
+        places = (self.piece - self.outcome.task.strength.pieces.first).tolist()
+        whole = (0.0, 1.0)
+        return [
+            whole if len(now.strength.stations) == 2 else tuple(now.strength.stations[place : place + 2].tolist())
+            for now, place in zip(conditions, places, strict=True)
+        ]
+
+    def forces(self) -> _Columns:
+        """Unfactored forces; none in a mechanism, and none of bars that are out."""
+        if self.figures is None:
+            nothing: list[Any] = [None] * self.count
+            return {"dead_components": nothing, "dead_wearing": nothing, "live": nothing}
+        out = np.isnan(self.figures.dead[0]).tolist()
+        by_bar = self.figures.live.transpose(2, 0, 1).tolist()
+        live: list[Any] = [
+            None if is_out else {load: Effect._make(pair) for load, pair in zip(self.loads, effects, strict=True)}
+            for is_out, effects in zip(out, by_bar, strict=True)
+        ]
+        return {
+            "dead_components": _cells(self.figures.dead[0]),
+            "dead_wearing": _cells(self.figures.dead[1]),
+            "live": live,
+        }
+
+    def governing(self) -> _Columns:
+        """Rating factors, what governs them, and what else the bar has left."""
+        chosen = np.maximum(self.direction, 0)
+        capacity = self._of_direction(self.outcome.task.capacity[-1], chosen)
+        demand = (
+            np.full(self.count, np.nan) if self.figures is None else self._of_direction(self.figures.demand, chosen)
+        )
+        checks = self._checks()
+        return {
+            "rating_factor": self._rating_factors(),
+            "check": [check for check, _ in checks],
+            "load": [load for _, load in checks],
+            "direction": [None if way < 0 else _DIRECTIONS[way] for way in self.direction.tolist()],
+            "demand": _cells(demand),
+            "capacity": _cells(capacity),
+            "loss_allowance": self._allowance(),
+            "without_it": self._without(),
+        }
+
+    def _checks(self) -> list[tuple[str | None, str | None]]:
+        """Check and load that govern each bar."""
+        if self.figures is None:
+            return [check_and_load(self.outcome, number) for number in range(self.count)]
+        ways, loads = self.direction.tolist(), self.figures.load.tolist()
+        strength = self.outcome.task.strength.check.tolist()
+        found: list[tuple[str | None, str | None]] = []
+        for number, (way, load) in enumerate(zip(ways, loads, strict=True)):
+            if way < 0 or load < 0:
+                found.append(check_and_load(self.outcome, number))
+            else:
+                found.append((CHECKS[strength[way][number]], self.loads[load]))
+        return found
+
+    def _of_direction(self, pair: NDArray[np.float64], chosen: NDArray[np.int64]) -> NDArray[np.float64]:
+        return np.where(self.direction < 0, np.nan, np.where(chosen == 1, pair[1], pair[0]))
+
+    def _rating_factors(self) -> list[Any]:
+        levels = [level.name for level in self.outcome.task.basis.levels]
+        nothing = np.full((len(levels), self.count), np.nan)
+        found = nothing if self.figures is None else self.figures.lowest
+        by_level = [_cells(np.where(self.gone, 0.0, row)) for row in found]
+        return [dict(zip(levels, cells, strict=True)) for cells in zip(*by_level, strict=True)]
+
+    def _allowance(self) -> list[Any]:
+        found = np.full(self.count, np.nan) if self.figures is None else self.figures.allowance
+        return _cells(np.where(self.gone, 0.0, found))
+
+    def _without(self) -> list[Any]:
+        if self.figures is None:
+            return [None] * self.count
+        now = float(np.nanmin(self.figures.lowest[-1], initial=np.inf))
+        found = np.where(self.gone, now, self.figures.without).tolist()
+        return ["mechanism" if math.isnan(factor) else _cell(factor) for factor in found]
 
 
 def check_and_load(outcome: Outcome, number: int) -> tuple[str | None, str | None]:
     """What governs one bar at the upper level."""
-    checks = outcome.task.strength.check[:, number]
-    figures = _Bar(outcome, number)
-    names = CHECKS[int(checks[0])], CHECKS[int(checks[1])]
-    return _check(outcome, number, figures.direction, names, figures), figures.load
-
-
-class _Bar:
-    """One bar's figures out of the arrays of its truss, None where there are none."""
-
-    def __init__(self, outcome: Outcome, number: int) -> None:
-        self._levels = tuple(level.name for level in outcome.task.basis.levels)
-        self._factor = outcome.task.factor[:, number]
-        self._figures = outcome.solved.figures if outcome.solved else None
-        self._loads = outcome.solved.answer.loads if outcome.solved else ()
-        self._number = number
-
-    @property
-    def direction(self) -> int | None:
-        if self._figures is None or not math.isfinite(self._figures.lowest[-1, self._number]):
-            return None
-        return int(self._figures.direction[self._number])
-
-    @property
-    def dead_exceeds(self) -> bool:
-        return self._figures is not None and bool(self._figures.dead_exceeds[:, self._number].any())
-
-    @property
-    def load(self) -> str | None:
-        if self._figures is None:
-            return None
-        load = int(self._figures.load[self._number])
-        return None if load < 0 else self._loads[load]
-
-    def dead(self, part: int) -> float | None:
-        return None if self._figures is None else _number(self._figures.dead[part, self._number])
-
-    def live(self) -> dict[str, Effect] | None:
-        if self._figures is None:
-            return None
-        found = self._figures.live[:, :, self._number].tolist()
-        if any(math.isnan(value) for pair in found for value in pair):
-            return None
-        return {load: Effect(largest, least) for load, (largest, least) in zip(self._loads, found, strict=True)}
-
-    def rating_factor(self) -> dict[str, float | None]:
-        if self._figures is None:
-            return dict.fromkeys(self._levels)
-        found = self._figures.lowest[:, self._number].tolist()
-        return {level: _number(value) for level, value in zip(self._levels, found, strict=True)}
-
-    def gone(self) -> dict[str, float | None]:
-        return dict.fromkeys(self._levels, 0.0)
-
-    def demand(self, direction: int) -> float | None:
-        if self._figures is None:
-            return None
-        return _number(self._figures.demand[direction, self._number])
-
-    def factor(self, direction: int) -> float:
-        return float(self._factor[direction])
-
-    def allowance(self) -> float | None:
-        return None if self._figures is None else _number(self._figures.allowance[self._number])
-
-    def without(self) -> float | Literal["mechanism"] | None:
-        if self._figures is None:
-            return None
-        found = float(self._figures.without[self._number])
-        return "mechanism" if math.isnan(found) else _number(found)
-
-    def lowest_of_all(self) -> float | None:
-        return None if self._figures is None else _number(np.nanmin(self._figures.lowest[-1]))
-
-
-def _number(value: float) -> float | None:
-    """A float that exists, or None."""
-    return float(value) if math.isfinite(value) else None
-
-
-def _check(outcome: Outcome, number: int, direction: int | None, names: tuple[str, str], figures: _Bar) -> str | None:
     if number in outcome.severed:
-        return "severed"
+        return "severed", None
     if number in outcome.cracked:
-        return "cracked"
-    if direction is None:
-        return None
-    return "dead load" if figures.dead_exceeds else names[direction]
+        return "cracked", None
+    figures = outcome.solved.figures if outcome.solved else None
+    if figures is None or not math.isfinite(figures.lowest[-1, number]):
+        return None, None
+    return _governs(outcome, figures, number)
 
 
-def _known(outcome: Outcome, now: BarCondition, piece: int) -> str:
-    """How the governing section is known, in the words of the result."""
-    if now.seen and outcome.task.strength.pieces.measured[piece]:
-        return "measured"
-    return now.known
+def _governs(outcome: Outcome, figures: Figures, number: int) -> tuple[str, str | None]:
+    load = int(figures.load[number])
+    if load < 0 or outcome.solved is None:
+        return "dead load", None
+    check = outcome.task.strength.check[figures.direction[number], number]
+    return CHECKS[check], outcome.solved.answer.loads[load]
 
 
-def _where(outcome: Outcome, number: int, piece: int) -> tuple[float, float]:
-    stations = outcome.conditions[number].strength.stations
-    place = piece - int(outcome.task.strength.pieces.first[number])
-    return float(stations[place]), float(stations[place + 1])
+def _cell(value: float) -> float | None:
+    """A float that exists, or None."""
+    return value if math.isfinite(value) else None
+
+
+def _cells(values: NDArray[np.float64]) -> list[Any]:
+    """Floats, None where there is none."""
+    return [value if math.isfinite(value) else None for value in values.tolist()]
 
 
 def reactions_of(outcome: Outcome) -> tuple[Reaction, ...]:

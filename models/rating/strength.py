@@ -45,18 +45,23 @@ def pieces_of(stock: Stock, conditions: tuple[BarCondition, ...]) -> Pieces:
     first = np.concatenate([[0], np.cumsum(counts)[:-1]])
     owner = np.repeat(np.arange(len(conditions)), counts)
     stack = stock.stack.take(owner)
-    thickness = np.zeros(stack.shape)
+    thickness = padded([now.strength.thickness for now in conditions], stack.shape[1])
     measured, raises = np.zeros((2, len(owner)), bool)
     for start, now in zip(first.tolist(), conditions, strict=True):
-        profile = now.strength
-        rows, plates = profile.thickness.shape
-        thickness[start : start + rows, :plates] = profile.thickness
         if now.has_reading:
-            by_reading = profile.rests_on == READING
+            profile = now.strength
+            rows, by_reading = len(profile.thickness), profile.rests_on == READING
             measured[start : start + rows] = by_reading.all(axis=1)
             fresh = by_reading & profile.cleaned & (profile.visit >= now.state_visit)
             raises[start : start + rows] = fresh.all(axis=1)
     return Pieces(owner, first, stack, thickness, measured, raises)
+
+
+def padded(thicknesses: list[Array], plates: int) -> Array:
+    """Plates of many bars under each other, (n, plates), with plates of no thickness where a bar has fewer."""
+    if all(thickness.shape[1] == plates for thickness in thicknesses):
+        return np.concatenate(thicknesses)
+    return np.concatenate([np.pad(one, ((0, 0), (0, plates - one.shape[1]))) for one in thicknesses])
 
 
 def member_of(stock: Stock, owner: NDArray[np.int64], found: Properties, effective_lengths: Array) -> Member:
