@@ -22,14 +22,15 @@ class Items(Form[tuple[T, ...]]):
     @property
     def expected(self) -> str:
         """See `Form`."""
-        return f"a list, each {self.item.expected}" + (f", at least {self.least}" if self.least else "")
+        size = f" of at least {self.least}" if self.least else ""
+        return f"a list{size}, each {self.item.expected}"
 
     def read(self, value: Json, path: str, problems: list[Problem]) -> tuple[T, ...]:
         """See `Form`."""
         if not isinstance(value, list):
             return self.refuse(value, path, problems)
         if len(value) < self.least:
-            self.refuse(value, path, problems, f"the list has {len(value)}")
+            self.refuse(value, path, problems, f"the list is too short, it has {len(value)}")
         return tuple(self.item.read(item, join(path, index), problems) for index, item in enumerate(value))
 
     def write(self, value: tuple[T, ...]) -> Json:
@@ -104,14 +105,16 @@ class Named(Form[Mapping[str, T]]):
     def expected(self) -> str:
         """See `Form`."""
         ends = [("at least", self.least or None), ("at most", self.most)]
-        return ", ".join(["an object of names with values", *(f"{word} {end}" for word, end in ends if end)])
+        return ", ".join(
+            ["an object of names and what they stand for", *(f"{word} {end}" for word, end in ends if end)]
+        )
 
     def read(self, value: Json, path: str, problems: list[Problem]) -> Mapping[str, T]:
         """See `Form`."""
         if not isinstance(value, dict):
             return self.refuse(value, path, problems)
         if not self.least <= len(value) <= (len(value) if self.most is None else self.most):
-            self.refuse(value, path, problems, f"the object has {len(value)}")
+            self.refuse(value, path, problems, f"there are {len(value)}")
         return {name: self._one(name, item, path, problems) for name, item in value.items()}
 
     def _one(self, name: str, item: Json, path: str, problems: list[Problem]) -> T:

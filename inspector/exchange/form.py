@@ -64,7 +64,9 @@ def nearest(name: object, known: Iterable[str]) -> str:
     close = difflib.get_close_matches(str(name), names, n=1, cutoff=0.6)
     rest = [one for one in names if one not in close]
     row = ", ".join(f"`{one}`" for one in (close + rest)[:8]) + (" ..." if len(names) > 8 else "")
-    return f"one of {row}" if names else "none: there are none"
+    if not names:
+        return "nothing: there are none"
+    return row if len(names) == 1 else f"one of {row}"
 
 
 def reference(name: str) -> dict[str, Json]:
@@ -99,7 +101,7 @@ class Form(ABC, Generic[T]):
     @final
     def refuse(self, value: Json, path: str, problems: list[Problem], what: str = "") -> T:
         """Note that a value is not of this form."""
-        problems.append(Problem(path, what or f"{shown(value)} is not {self.expected}", self.expected if what else ""))
+        problems.append(Problem(path, what or f"{shown(value)} cannot stand here", self.expected))
         return cast("T", UNREADABLE)
 
 
@@ -112,7 +114,7 @@ class Text(Form[str]):
     @property
     def expected(self) -> str:
         """See `Form`."""
-        return "a name, which may not be empty" if self.name else "a text"
+        return "a text that is not empty" if self.name else "a text"
 
     def read(self, value: Json, path: str, problems: list[Problem]) -> str:
         """See `Form`."""
@@ -182,7 +184,7 @@ class Number(Form[float]):
             return self.refuse(value, path, problems)
         low = (self.least is not None and value < self.least) or (self.above is not None and value <= self.above)
         if low or (self.most is not None and value > self.most):
-            return self.refuse(value, path, problems)
+            return self.refuse(value, path, problems, f"{shown(value)} is out of range")
         return value
 
     def write(self, value: float) -> Json:
@@ -305,7 +307,7 @@ class Dimensioned(Form[Quantity]):
             return cast("Quantity", UNREADABLE)
         negative = quantity.text.startswith("-")
         if (self.sign and negative) or (self.sign == "positive" and quantity.si == 0):
-            return self.refuse(value, path, problems)
+            return self.refuse(value, path, problems, f"{shown(value)} is not {_SIGNS[self.sign][0]}")
         return quantity
 
     def write(self, value: Quantity) -> Json:

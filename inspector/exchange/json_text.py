@@ -66,8 +66,8 @@ def parse(data: bytes | str, source: str = "") -> Json:
             text, object_pairs_hook=_object, parse_float=_float, parse_int=_int, parse_constant=_Unusable
         )
     except json.JSONDecodeError as error:
-        where = f"line {error.lineno}, column {error.colno}"
-        _refuse(f"this is not JSON: {error.msg[0].lower()}{error.msg[1:]} at {where}", "a JSON document", source)
+        what = error.msg[0].lower() + error.msg[1:].removesuffix(" starting at")
+        _refuse(f"this is not JSON at line {error.lineno}, column {error.colno}: {what}", "a JSON document", source)
     problems = list(unusable(document))
     if problems:
         raise InputError(problems, source)

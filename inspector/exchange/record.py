@@ -75,7 +75,8 @@ class Record(Form[T]):
     @property
     def expected(self) -> str:
         """See `Form`."""
-        return "an object with the keys " + ", ".join(f"`{key.key}`" for key in self.keys)
+        keys = [key.key for key in self.keys if key.required] or [key.key for key in self.keys]
+        return "an object with " + ", ".join(f"`{key}`" for key in keys)
 
     def read(self, value: Json, path: str, problems: list[Problem]) -> T:
         """See `Form`."""
@@ -107,7 +108,8 @@ class Record(Form[T]):
             return key.form.read(value[key.key], join(path, key.key), problems)
         if key.identity:
             return None
-        problems.append(Problem(join(path, key.key), "is missing", key.form.expected))
+        reasons = [f", which `{need.value}` needs" for need in self.needs if key.key in need.then]
+        problems.append(Problem(join(path, key.key), "is missing" + "".join(reasons), key.form.expected))
         return UNREADABLE
 
     def _groups(self, value: Mapping[str, Json], path: str) -> list[Problem]:

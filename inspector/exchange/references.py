@@ -33,12 +33,13 @@ def complete(names: Iterable[str]) -> list[str]:
     return found if readable(*found) else UNREADABLE
 
 
-def known(name: str | None, names: Iterable[str], path: str, what: str) -> Problems:
-    """A problem where a name is given and nothing has it."""
+def known(name: str | None, names: Iterable[str], path: str, what: str, owner: str = "") -> Problems:
+    """A problem where a name is given and nothing, or nothing of its owner's, has it."""
     if name is None or not readable(name, names):
         return
     if name not in names:
-        yield Problem(path, f"there is no {what} `{name}`", nearest(name, names))
+        start = f"{owner} has no" if owner else "there is no"
+        yield Problem(path, f"{start} {what} `{name}`", nearest(name, names))
 
 
 def twice(names: Iterable[tuple[str, str | None]], what: str) -> Problems:
@@ -88,7 +89,7 @@ class Directory:
         yield from known(truss, self.bridge.trusses, f"{path}/truss", "truss")
         bars = self.bars(truss)
         if bars is not None:
-            yield from known(bar, bars, f"{path}/bar", f"bar of truss `{truss}`")
+            yield from known(bar, bars, f"{path}/bar", "bar", f"truss `{truss}`")
 
     def piece(self, section: str | None, material: str | None, path: str) -> Problems:
         """Problems where a section or a material is named that is not there."""

@@ -30,9 +30,8 @@ def observations(there: Directory) -> Problems:
         if entry.readings and readable(entry.truss, entry.bar, entry.readings):
             plates = _plates(there, entry, replacing.get((entry.truss, entry.bar), []))
             for number, reading in each(entry.readings) if plates is not None else ():
-                yield from known(
-                    reading.plate, plates or (), f"{path}/readings/{number}/plate", f"plate of `{entry.bar}`"
-                )
+                place = f"{path}/readings/{number}/plate"
+                yield from known(reading.plate, plates or (), place, "plate", f"the section of `{entry.bar}`")
 
 
 def _entries(there: Directory) -> Iterable[tuple[str, Entry]]:
