@@ -1,0 +1,103 @@
+"""Slender plates: the limits as printed, from both sides, with what remains of the thickness."""
+
+from __future__ import annotations
+
+import math
+
+import numpy as np
+import pytest
+from section.making import ALL, BOX, I_SECTION, PIPE, section
+
+from models.bridge import Section
+from models.section import built, slender, stack
+
+E, FY = 200e9, 250e6
+ROOT = math.sqrt(E / FY)
+BACK_TO_BACK = section("double angle", legs=(100, 60), thickness=8, gap=0)
+CHANNEL = section("channel", depth=200, flange_width=60, web_thickness=8, flange_thickness=10)
+ROLLED = section("i section", depth=200, flange_width=100, web_thickness=6, flange_thickness=9, rolled=True)
+TEE = section("tee", depth=120, flange_width=100, web_thickness=8, flange_thickness=12)
+WELDED_BOX = section("rectangular tube", depth=120, width=80, thickness=5, formed="welded")
+BUILT_BOX = section(
+    "built up",
+    plates={"top": (220, 10, 0, 105), "bottom": (220, 10, 0, -105), "l": (8, 200, -80, 0), "r": (8, 200, 80, 0)},
+)
+
+
+@pytest.mark.parametrize(
+    ("one", "plate", "limit"),
+    [
+        (section("angle", legs=(100, 60), thickness=8), "vertical leg", 100 / (0.45 * ROOT)),
+        (section("angle", legs=(100, 60), thickness=8), "horizontal leg", 60 / (0.45 * ROOT)),
+        (BACK_TO_BACK, "left vertical leg", 100 / (0.45 * ROOT)),
+        (CHANNEL, "web", 180 / (1.49 * ROOT)),
+        (CHANNEL, "top flange", 60 / (0.56 * ROOT)),
+        (ROLLED, "bottom flange", 50 / (0.56 * ROOT)),
+        (ROLLED, "web", 182 / (1.49 * ROOT)),
+        (TEE, "flange", 50 / (0.56 * ROOT)),
+        (TEE, "web", 120 / (0.75 * ROOT)),
+        (BOX, "top wall", 70 / (1.40 * ROOT)),
+        (BOX, "left wall", 110 / (1.40 * ROOT)),
+        (WELDED_BOX, "left wall", 110 / (1.49 * ROOT)),
+        (PIPE, "wall", 114.3 / (0.11 * E / FY)),
+        (BUILT_BOX, "top", 152 / (1.49 * ROOT)),
+        (BUILT_BOX, "l", 200 / (1.49 * ROOT)),
+    ],
+    ids=lambda value: getattr(value, "shape", None),
+)
+def test_a_plate_is_slender_just_below_its_limit_thickness(one: Section, plate: str, limit: float) -> None:
+    """At breadth over thickness just above the coefficient of its row in the table a plate is slender, below not."""
+    new = built(one)
+    stacked = stack([new, new])
+    place = new.plates.index(plate)
+    thickness = stacked.thickness.copy()
+    thickness[:, place] = limit * (1 - 1e-9) / 1e3, limit * (1 + 1e-9) / 1e3
+    assert slender(stacked, thickness, E, FY)[:, place].tolist() == [True, False]
+
+
+def test_flanges_welded_to_a_slender_web_have_the_lower_limit() -> None:
+    """A flange welded to its web takes 0.64 sqrt(kc E/Fy), kc from what remains of the web and at least 0.35."""
+    stacked = stack([built(I_SECTION)] * 4)
+    thickness = stacked.thickness.copy()
+    kc = 4 / math.sqrt(182 / 4)
+    thickness[:2, 0], thickness[2:, 0] = 4 / 1e3, 0.5 / 1e3
+    for row, factor in ((0, kc), (2, 0.35)):
+        limit = 50 / (0.64 * math.sqrt(factor) * ROOT) / 1e3
+        thickness[row : row + 2, 1] = limit * (1 - 1e-9), limit * (1 + 1e-9)
+    assert slender(stacked, thickness, E, FY)[:, 1].tolist() == [True, False, True, False]
+
+
+def test_the_part_of_a_cover_that_stands_out_has_the_outstand_limit() -> None:
+    """Of a built-up cover plate, a long overhang decides by the limit of plates held along one edge."""
+    wide = {"top": (400, 10, 0, 105), "l": (8, 200, -80, 0), "r": (8, 200, 80, 0)}
+    stacked = stack([built(section("built up", plates=wide))] * 2)
+    thickness = stacked.thickness.copy()
+    limit = (200 - 84) / (0.45 * ROOT) / 1e3
+    thickness[:, 0] = limit * (1 - 1e-9), limit * (1 + 1e-9)
+    assert slender(stacked, thickness, E, FY)[:, 0].tolist() == [True, False]
+
+
+def test_solid_bars_and_loose_plates_have_no_limit() -> None:
+    """Round bars, flat bars and built-up plates that nothing holds are never called slender."""
+    loose = section("built up", plates={"a": (200, 2, 0, 0), "b": (200, 2, 0, 100)})
+    stacked = stack(
+        [built(one) for one in (section("round bar", diameter=5), section("flat bar", width=200, thickness=1), loose)]
+    )
+    assert not slender(stacked, stacked.thickness, E, FY).any()
+
+
+def test_a_gone_plate_is_not_slender() -> None:
+    """A plate of zero thickness is gone; only what is left can buckle."""
+    stacked = stack([built(one) for one in ALL])
+    assert not slender(stacked, np.zeros(stacked.shape), E, FY).any()
+
+
+def test_strengths_may_differ_from_bar_to_bar() -> None:
+    """Stronger steel has the lower limit: the same tube is slender in one bar and not in another."""
+    stacked = stack([built(BOX), built(BOX)])
+    thickness = np.full((2, 4), 0.0033)
+    assert slender(stacked, thickness, np.array([E, E]), np.array([250e6, 690e6])).all(axis=1).tolist() == [
+        False,
+        False,
+    ]
+    assert slender(stacked, thickness, np.array([E, E]), np.array([250e6, 690e6]))[:, 2].tolist() == [False, True]
