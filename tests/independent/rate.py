@@ -1,0 +1,320 @@
+"""The whole rating of a site document by the force method: one plain loop after another."""
+
+from __future__ import annotations
+
+import math
+from dataclasses import dataclass
+from typing import Any
+
+import numpy as np
+from independent import loads, sections
+from independent.condition import Condition, fold
+from independent.force_method import Frame
+from independent.resistance import SYSTEMS, Resistance, condition_factor, resistance
+from independent.units import si
+
+JSON = dict[str, Any]
+LEVELS = {"inventory": 1.75, "operating": 1.35}
+NO_FORCE = 1e-9  # of the largest force in the truss: below it a bar has none
+SINGULAR = 1e8
+STEPS = 20
+Candidate = tuple[float, str, str | None]
+
+
+@dataclass(frozen=True)
+class Effects:
+    """Unfactored forces of one bar (N, tension positive)."""
+
+    components: float
+    wearing: float
+    live: dict[str, tuple[float, float]]
+
+
+def factored_dead(effects: Effects, sign: int) -> float:
+    """Return the factored dead effect in a direction: each part at its greatest factor where it adds."""
+    dc, dw = sign * effects.components, sign * effects.wearing
+    return (1.25 if dc > 0 else 0.90) * dc + (1.50 if dw > 0 else 0.65) * dw
+
+
+def candidates(effects: Effects, own: Resistance, factor: float, factor_live: float, tiny: float) -> list[Candidate]:
+    """Return every rating factor of a bar with its check and load."""
+    found: list[Candidate] = []
+    directions = ((1, own.tension, own.tension_check), (-1, own.compression, "flexural buckling"))
+    for sign, strength, check in directions:
+        margin = factor * strength - factored_dead(effects, sign)
+        if margin < 0:
+            found.append((0.0, "dead load", None))
+            continue
+        for name, extremes in effects.live.items():
+            force = sign * extremes[0 if sign > 0 else 1]
+            if force > tiny:
+                found.append((margin / (factor_live * force), check, name))
+    return found
+
+
+class Truss:
+    """One truss of the document with everything that its bars' readings do to it."""
+
+    def __init__(self, document: JSON, name: str, truss: JSON) -> None:
+        self.document, self.name, self.truss = document, name, truss
+        self.joints = {joint: (si(x), si(y)) for joint, (x, y) in truss["joints"].items()}
+        self.bars: dict[str, JSON] = {bar["id"]: bar for bar in truss["bars"]}
+        self.conditions = {key: fold(document, name, bar, self.length(bar)) for key, bar in self.bars.items()}
+        self.carrying = [key for key in self.bars if not self.conditions[key].severed]
+        self.across = loads.Across(document, name)
+        self.stations = [self.joints[joint][0] for joint in truss["deck joints"]]
+        weighed = [
+            (bar, self.length(bar), self.conditions[key].section, self.conditions[key].material)
+            for key, bar in self.bars.items()
+        ]
+        units = [{joint: 1.0} for joint in truss["deck joints"]]
+        self.cases = [*loads.dead(document, name, truss, weighed), *units]
+        self.frame, self.base = self.framed(self.carrying)
+        self._whole: dict[tuple[str, str], float] = {}
+        self._owns: dict[tuple[str, float, bool], Resistance] = {}
+        uncertain = self.frame.self_stress > 0 and any(self.conditions[key].uncertain() for key in self.carrying)
+        self.variants = ("zero", "whole") if uncertain else ("zero",)
+
+    def length(self, bar: JSON) -> float:
+        """Return a bar's length (m)."""
+        a, b = self.joints[bar["from"]], self.joints[bar["to"]]
+        return math.hypot(b[0] - a[0], b[1] - a[1])
+
+    def framed(self, keys: list[str]) -> tuple[Frame, np.ndarray | None]:
+        """Return the truss of these bars and its forces with every redundant at zero; none for a mechanism."""
+        ends = [(self.bars[key]["from"], self.bars[key]["to"]) for key in keys]
+        frame = Frame(self.joints, self.truss["supports"], ends)
+        if frame.mechanisms or frame.condition() > SINGULAR:
+            return frame, None
+        return frame, frame.determinate(frame.loads(self.cases))
+
+    def flexibility(self, key: str, variant: str, left: float = 1.0) -> float:
+        """Return the integral of dx/(E A(x)) along a bar (m/N)."""
+        if left == 1.0 and (key, variant) in self._whole:
+            return self._whole[key, variant]
+        condition = self.conditions[key]
+        E = si(condition.material["E"])
+        total = 0.0
+        for piece in condition.pieces(variant):
+            thickness = {name: t * left for name, t in piece.thickness.items()}
+            total += piece.length / (E * sections.properties(condition.section, thickness).area)
+        if left == 1.0:
+            self._whole[key, variant] = total
+        return total
+
+    def effects(self, row: np.ndarray) -> Effects:
+        """Return one bar's forces from its row of dead and unit cases."""
+        numbers = [float(number) for number in row]
+        live = {
+            load["name"]: loads.live(load, self.across, self.stations, numbers[2:])
+            for load in self.document["rating"]["live"]
+        }
+        return Effects(numbers[0], numbers[1], live)
+
+    def own(self, key: str, left: float = 1.0, *, gross: bool = False) -> Resistance:
+        """Return a bar's factored resistance with a share of its thickness left; `gross`: slender plates whole."""
+        if (key, left, gross) not in self._owns:
+            built, top = self.document.get("built"), self.truss["top chord"]
+            self._owns[key, left, gross] = resistance(
+                self.bars[key], self.conditions[key], top, built, left, gross=gross
+            )
+        return self._owns[key, left, gross]
+
+    def factors(self, key: str) -> tuple[float, float]:
+        """Return the condition factor and the system factor of a bar."""
+        system = self.bars[key].get("system", self.document["rating"]["system"])
+        return condition_factor(self.conditions[key], self.own(key).measured), SYSTEMS[system]
+
+    def all_effects(self, variant: str, without: str | None = None) -> dict[str, Effects] | None:
+        """Return the forces of every bar that carries; none for a mechanism."""
+        frame, base, keys = self.frame, self.base, self.carrying
+        if without is not None:
+            keys = [key for key in keys if key != without]
+            frame, base = self.framed(keys)
+        if base is None:
+            return None
+        forces = frame.compatible(base, [self.flexibility(key, variant) for key in keys])
+        return {key: self.effects(forces[number]) for number, key in enumerate(keys)}
+
+    def thinned(self, key: str, variant: str, left: float) -> Effects:
+        """Return one bar's forces with only `left` of its plates' thickness."""
+        if self.base is None:
+            raise ValueError(self.name)
+        flexible = [self.flexibility(one, variant, left if one == key else 1.0) for one in self.carrying]
+        return self.effects(self.frame.compatible(self.base, flexible)[self.carrying.index(key)])
+
+
+def largest(effects: dict[str, Effects]) -> float:
+    """Return the largest force (N) that any load puts into any bar of a truss."""
+    return max(
+        abs(force)
+        for own in effects.values()
+        for force in (own.components, own.wearing, *(end for pair in own.live.values() for end in pair))
+    )
+
+
+def strength_factor(truss: Truss, key: str) -> float:
+    """Return the product of condition and system factor, not below 0.85 (MBE 6A.4.2.1)."""
+    condition, system = truss.factors(key)
+    return max(0.85, condition * system)
+
+
+def lowest(found: list[Candidate]) -> float | None:
+    """Return the least rating factor, or none."""
+    return min((factor for factor, *_ in found), default=None)
+
+
+def allowance(
+    truss: Truss, key: str, effects: dict[str, dict[str, Effects]], tiny: float, *, gross: bool = False
+) -> float | None:
+    """Return the share of thickness that may still go until the operating factor is 1.
+
+    The first crossing on a grid of 20 steps, then bisection, everything computed again at every step.
+    `gross` counts slender plates whole.
+    """
+    factor = strength_factor(truss, key)
+
+    def at(lost: float) -> float:
+        own = truss.own(key, 1 - lost, gross=gross)
+        held = truss.frame.self_stress == 0
+        found = []
+        for variant in truss.variants:
+            forces = effects[variant][key] if held else truss.thinned(key, variant, 1 - lost)
+            found += candidates(forces, own, factor, LEVELS["operating"], tiny)
+        least = lowest(found)
+        return math.inf if least is None else least
+
+    now = at(0.0)
+    if now < 1:
+        return 0.0
+    grid = [0.95 * step / STEPS for step in range(STEPS + 1)]
+    high = next((lost for lost in grid if at(lost) < 1), None)
+    if high is None or now == math.inf:
+        return None
+    low = high - grid[1]
+    while high - low > 1e-12:
+        middle = (low + high) / 2
+        low, high = (middle, high) if at(middle) >= 1 else (low, middle)
+    return low
+
+
+def without(truss: Truss, key: str, tiny: float) -> str | float | None:
+    """Return what one bar's loss leaves: `mechanism`, or the lowest operating factor of the truss's other bars."""
+    found: list[Candidate] = []
+    for variant in truss.variants:
+        effects = truss.all_effects(variant, key)
+        if effects is None:
+            return "mechanism"
+        for other, own in effects.items():
+            strength = truss.own(other)
+            found += candidates(own, strength, strength_factor(truss, other), LEVELS["operating"], tiny)
+    return lowest(found)
+
+
+def severed(truss: Truss, key: str) -> JSON:
+    """Return the row of a bar that is gone."""
+    area = sections.properties(truss.conditions[key].section, truss.conditions[key].nominal()).area
+    zero = {"inventory": 0.0, "operating": 0.0}
+    return {"truss": truss.name, "bar": key, "area": 0.0, "nominal area": area, "rating factor": zero, "severed": True}
+
+
+def row(truss: Truss, key: str, effects: dict[str, dict[str, Effects]], tiny: float, redundancy: bool) -> JSON:
+    """Return one bar's row: its worse variant's forces, factors and every candidate that could govern."""
+    own, condition = truss.own(key), truss.conditions[key]
+    phi_c, phi_s = truss.factors(key)
+    factor = strength_factor(truss, key)
+    by_level = {
+        level: {v: candidates(effects[v][key], own, factor, size, tiny) for v in truss.variants}
+        for level, size in LEVELS.items()
+    }
+    operating = by_level["operating"]
+    shown = min(truss.variants, key=lambda v: math.inf if lowest(operating[v]) is None else lowest(operating[v]))
+    forces = effects[shown][key]
+    allowed = allowance(truss, key, effects, tiny) if redundancy else None
+    slender = redundancy and truss.own(key, 0.05 if allowed is None else 1 - allowed).slender
+    return {
+        "truss": truss.name,
+        "bar": key,
+        "severed": False,
+        "area": own.area,
+        "nominal area": sections.properties(condition.section, condition.nominal()).area,
+        "dead": {"components": forces.components, "wearing": forces.wearing},
+        "live": {name: {"max": most, "min": least} for name, (most, least) in forces.live.items()},
+        "resistance": {"tension": own.tension, "compression": own.compression},
+        "condition factor": phi_c,
+        "system factor": phi_s,
+        "rating factor": {level: lowest([c for v in found.values() for c in v]) for level, found in by_level.items()},
+        "candidates": sorted((c for v in operating.values() for c in v), key=lambda c: c[0]),
+        "loss allowance": allowed,
+        "without it": without(truss, key, tiny) if redundancy else None,
+        "loss allowance, slender plates whole": allowance(truss, key, effects, tiny, gross=True)
+        if slender
+        else allowed,
+        "slender": own.slender,
+        "largest force": tiny / NO_FORCE,
+    }
+
+
+def expanded(document: JSON) -> dict[str, JSON]:
+    """Return the trusses with `same as` written out."""
+    trusses = document["trusses"]
+    return {name: trusses[truss["same as"]] if "same as" in truss else truss for name, truss in trusses.items()}
+
+
+def counts(truss: Truss) -> JSON:
+    """Return what can be counted in a truss, and its verdict."""
+    frame, bars, joints = truss.frame, len(truss.carrying), len(truss.joints)
+    if frame.mechanisms:
+        verdict = "mechanism"
+    elif truss.base is None:
+        verdict = "nearly a mechanism"
+    else:
+        verdict = "redundant" if frame.self_stress else "determinate"
+    return {
+        "joints": joints,
+        "bars": bars,
+        "reactions": frame.reactions,
+        "degree": bars + frame.reactions - 2 * joints,
+        "mechanisms": frame.mechanisms,
+        "verdict": verdict,
+    }
+
+
+def solve(document: JSON, *, redundancy: bool = True) -> JSON:
+    """Rate a site document.
+
+    Parameters
+    ----------
+    document : a site file as parsed JSON, basis `lrfr`.
+    redundancy : also find loss allowances and what is left without each bar (the slow part).
+
+    Returns
+    -------
+    `trusses`, `bars` and `structure` much as in the result file; each bar also lists its `candidates`
+    (operating factor, check, load), lowest first, so that a tie can be told from a disagreement.
+    """
+    result: JSON = {"trusses": {}, "bars": [], "structure": None}
+    for name, one in expanded(document).items():
+        truss = Truss(document, name, one)
+        result["trusses"][name] = counts(truss)
+        result["bars"] += [severed(truss, key) for key in truss.bars if key not in truss.carrying]
+        if truss.base is None:
+            continue
+        effects = {variant: truss.all_effects(variant) or {} for variant in truss.variants}
+        tiny = NO_FORCE * max(largest(own) for own in effects.values())
+        result["bars"] += [row(truss, key, effects, tiny, redundancy) for key in truss.carrying]
+    rated = [bar for bar in result["bars"] if not bar["severed"] and bar["candidates"]]
+    moving = any(
+        truss["mechanisms"] or truss["verdict"] == "nearly a mechanism" for truss in result["trusses"].values()
+    )
+    result["structure"] = (
+        dict.fromkeys(LEVELS, 0.0)
+        if moving
+        else {level: min((bar["rating factor"][level] for bar in rated), default=None) for level in LEVELS}
+    )
+    return result
+
+
+def conditions(document: JSON, truss: str) -> dict[str, Condition]:
+    """Return the folded condition of each bar of a truss, for tests of the fold alone."""
+    return Truss(document, truss, expanded(document)[truss]).conditions
