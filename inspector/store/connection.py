@@ -71,6 +71,10 @@ def explained(path: Path) -> Iterator[None]:
         raise StoreError(_explain(path, error.orig)) from error
     except sqlite3.Error as error:
         raise StoreError(_explain(path, error)) from error
+    except OSError as error:
+        raise StoreError(
+            f"{path} cannot be reached: {error.strerror}. See that you may read and write there."
+        ) from error
     except (OverflowError, UnicodeEncodeError) as error:
         raise StoreError(
             f"{path}: a value cannot be stored ({error}): a number has more than 18 digits, or a text holds half a "

@@ -84,13 +84,14 @@ def look(path: Path) -> str | None:
                 f"{path} is a database of another program; it was left as it is. Give the path of a store, or of a "
                 "new file."
             )
-        found = connection.execute("PRAGMA quick_check(1)").fetchone()[0]
+        version = connection.execute("SELECT version_num FROM alembic_version").fetchone()
+        found = connection.execute("PRAGMA quick_check(1)").fetchone()[0] if version else "no version"
         if found != "ok":
             raise StoreError(
                 f"{path} is damaged ({found}). Keep a copy of the file as it is; then use the last backup, or read the "
                 "exported site files into a new store."
             )
-        return str(connection.execute("SELECT version_num FROM alembic_version").fetchone()[0])
+        return str(version[0])
 
 
 def create(engine: Engine) -> None:
