@@ -15,6 +15,9 @@ from models.words import Figures, significant
 HAND_DIGITS: Final = 5
 """Significant digits of a hand check: enough to work each line again from what is printed."""
 
+_ROUNDING: Final = 1e-9
+"""In any printed unit: what is smaller is the rounding of the arithmetic and prints as 0."""
+
 _LOOSE, _SUM, _PRODUCT, _POWER, _ATOM = range(5)
 _RELATION_SIGNS: Final = {"<": "<", "<=": "≤", ">": ">", ">=": "≥"}
 
@@ -101,7 +104,8 @@ def _walk(node: Traced) -> Iterator[Traced]:
 
 def _plain(number: float, kind: Kind, figures: Figures) -> str:
     unit = figures.unit(kind)
-    digits = significant(figures.scaled(number, kind), HAND_DIGITS)
+    printed = figures.scaled(number, kind)
+    digits = significant(0.0 if abs(printed) < _ROUNDING else printed, HAND_DIGITS)
     if "." in digits:
         digits = digits.rstrip("0").rstrip(".")
     return f"{digits} {unit}".rstrip().replace("-", "−")

@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Mapping, Sequence
+from typing import Final
 
 from reportlab.platypus import Flowable
 
@@ -11,6 +12,9 @@ from inspector.report.style import NOTE, heading, part, table, text
 from models import words
 from models.rating.result import BarRating, Effect, Rating, TrussRating
 from models.words import Figures
+
+_LEAST_FORCE: Final = 0.5
+"""N."""
 
 
 def bars(rating: Rating, findings: Sequence[Told], figures: Figures, width: float) -> list[Flowable]:
@@ -47,7 +51,7 @@ def _table(
         "see",
     )  # fmt: skip
     levels = len(rating.levels)
-    shares = (15, 38, 38, 24, 57, 28, 25, 28, 27, 28, 28, 28, 28, 66, 32, 28, *(40,) * levels, 29, 23, 44, 36)
+    shares = (15, 36, 44, 27, 56, 28, 25, 28, 27, 28, 28, 30, 30, 66, 32, 27, *(40,) * levels, 29, 23, 43, 30)
     align = "r" + "llll" + "rrrrrrrr" + "ll" + "r" * (levels + 4) + "l"
     rows = [
         (number, *_bar(bar, rating, figures), marks.get((bar.truss, bar.bar), ""))
@@ -92,8 +96,13 @@ def _without(found: float | str | None) -> str:
 
 
 def number(value: float | None, figures: Figures) -> str:
-    """A force to three significant digits, in the printed unit that stands in the head."""
-    return "none" if value is None else figures.number(value, "force")
+    """A force to three significant digits, in the printed unit that stands in the head.
+
+    What is below half a newton is rounding of the arithmetic, or no matter to a bridge: it prints as 0.
+    """
+    if value is None:
+        return "none"
+    return figures.number(value if abs(value) >= _LEAST_FORCE else 0.0, "force")
 
 
 def governing_live(bar: BarRating) -> Effect | None:

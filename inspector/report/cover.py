@@ -8,7 +8,7 @@ from reportlab.lib.units import mm
 from reportlab.platypus import Flowable, KeepTogether, Table
 
 from inspector.report.fonts import REGULAR
-from inspector.report.style import BODY, CELL, HAIR, INK, SMALL, STAMP, STRONG, TITLE, gap, heading, pairs, text
+from inspector.report.style import BODY, CELL, HAIR, INK, SMALL, STAMP, STRONG, TITLE, gap, heading, pairs, text, title
 from models.bridge import Footbridge
 from models.journal import Journal
 from models.rating.result import Rating
@@ -38,7 +38,7 @@ def cover(rating: Rating, bridge: Footbridge, journal: Journal, width: float) ->
         gap(6),
         text(STATUS, STAMP),
         text("Rating summary", TITLE),
-        text(bridge.name, TITLE),
+        title(bridge.name),
         pairs(facts, width),
         gap(8),
         _boxed(text(CAUTION, STRONG), width),

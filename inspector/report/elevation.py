@@ -31,8 +31,9 @@ def elevations(rating: Rating, bridge: Footbridge, figures: Figures, width: floa
     for name, truss in rating.trusses.items():
         pictures = in_parts(bridge.trusses[name], truss, "rating factor", rating.upper_level, figures, width / _LETTERS)
         share = (room - 60) / len(pictures) - 30
+        still = "" if truss.carries else f" ({truss.verdict}: no forces)"
         for picture in pictures:
-            block = [text(f"Truss {name}: {picture.title}", HEADING), drawing(picture, width, share), gap(4)]
+            block = [text(f"Truss {name}: {picture.title}{still}", HEADING), drawing(picture, width, share), gap(4)]
             story.append(KeepTogether(block))
         story.append(_legend(pictures[0].legend, width))
     return [*story, text(_SIGNS, NOTE)]

@@ -7,6 +7,7 @@ from collections.abc import Iterator, Mapping
 from reportlab.platypus import Flowable
 
 from inspector.report.bars import number
+from inspector.report.result_page import with_article
 from inspector.report.style import BODY, NOTE, heading, part, table, text
 from models.bridge import Bar, Footbridge, Rectangle, Section, SectionDimension, Truss
 from models.quantity import Quantity
@@ -67,7 +68,9 @@ def _live(rating: Rating, figures: Figures, width: float) -> list[Flowable]:
     story = heading(f"Live forces of each load, {unit}, unfactored (largest tension / largest compression)", 90)
     rows = []
     for bar in rating.bars:
-        live = bar.live or {}
+        live = bar.live
+        if live is None:
+            continue
         pairs = [
             f"{number(live[name].maximum, figures)} / {number(live[name].minimum, figures)}" if name in live else "none"
             for name in names
@@ -99,16 +102,12 @@ def model(rating: Rating, bridge: Footbridge, figures: Figures, width: float) ->
 def _moving(name: str, rated: TrussRating) -> list[Flowable]:
     if rated.carries:
         return []
-    said = f"Truss {name} is {_article(rated.verdict)}: no forces and no rating factors exist for it."
+    said = f"Truss {name} is {with_article(rated.verdict)}: no forces and no rating factors exist for it."
     if rated.moving_joints:
         said += f" Joints that move: {', '.join(rated.moving_joints)}."
     if rated.loose_bars:
         said += f" Bars that join moving to still parts: {', '.join(rated.loose_bars)}."
     return [text(said, BODY)]
-
-
-def _article(verdict: str) -> str:
-    return "a mechanism" if verdict == "mechanism" else verdict
 
 
 def _panel_points(name: str, truss: Truss, width: float) -> list[Flowable]:

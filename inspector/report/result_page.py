@@ -65,7 +65,7 @@ def _headline(rating: Rating) -> list[Flowable]:
         gap(8),
     ]
     if bar is None:
-        story.append(text("No single bar gives this figure: see the verdicts and findings below.", STRONG))
+        story.append(text(_why_no_bar(rating), STRONG))
     else:
         said = (
             f"Truss {bar.truss}, bar {bar.bar} ({bar.role}); check: {found.check}; load: {found.load or 'dead load'}; "
@@ -75,6 +75,19 @@ def _headline(rating: Rating) -> list[Flowable]:
     if others:
         story.append(text("At the other level, " + "; ".join(others) + ".", BODY))
     return story
+
+
+def _why_no_bar(rating: Rating) -> str:
+    still = [(name, truss.verdict) for name, truss in rating.trusses.items() if not truss.carries]
+    moving = [f"truss {name} is {with_article(verdict)}" for name, verdict in still]
+    if not moving:
+        return "No bar has a rating factor."
+    return "No bar gives this figure: " + "; ".join(moving) + " and has no forces."
+
+
+def with_article(verdict: str) -> str:
+    """A verdict as it stands in a sentence."""
+    return "a mechanism" if verdict == "mechanism" else verdict
 
 
 def _rf(value: float | None) -> str:

@@ -20,7 +20,9 @@ INK: Final = colors.black
 HAIR: Final = colors.Color(0.55, 0.55, 0.55)
 SHADED: Final = colors.Color(0.9, 0.9, 0.9)
 
-Align = Literal["l", "r", "c"]
+Align = Literal["l", "r"]
+
+_LONG_TITLE: Final = 60
 
 
 def page_size(units: str | None) -> tuple[float, float]:
@@ -55,6 +57,11 @@ CELL_RIGHT_BOLD: Final = _style("cell right bold", 6.3, bold=True, alignment=2)
 def text(words: object, style: Any = BODY) -> Any:
     """A paragraph of foreign text: nothing in it is read as markup."""
     return Paragraph(markup(str(words)), style)
+
+
+def title(words: str) -> Any:
+    """A name in large letters, smaller where it is long."""
+    return text(words, TITLE if len(words) <= _LONG_TITLE else PART)
 
 
 def cell(words: object, align: Align = "l", *, bold: bool = False) -> Any:
@@ -115,7 +122,20 @@ def table(
         ("BOTTOMPADDING", (0, 0), (-1, -1), 1.8),
         *(("LEFTPADDING", (k, 0), (k, -1), 6) for k in range(1, len(sides)) if sides[k - 1 : k + 1] == ["r", "l"]),
     ]
-    return Table([top, *body], colWidths=widths, repeatRows=1, style=commands, hAlign="LEFT", splitInRow=1)
+    tall = any(_lines(value, share) > _MOST_LINES for row in rows for value, share in zip(row, widths, strict=True))
+    return Table([top, *body], colWidths=widths, repeatRows=1, style=commands, hAlign="LEFT", splitInRow=int(tall))
+
+
+_MOST_LINES: Final = 25
+"""A row of more lines may be cut where a page ends; shorter ones stay whole."""
+
+
+def _lines(value: object, width: float) -> float:
+    """How many lines a cell may take, on the long side."""
+    if isinstance(value, Flowable):
+        return 0
+    words = str(value)
+    return words.count("\n") + len(words) * 5 / width
 
 
 def pairs(rows: Sequence[tuple[str, object]], width: float, first: float = 0.3) -> Any:

@@ -132,6 +132,7 @@ def find_root(function: Callable[[Array], Array], low: Array, high: Array, at_lo
     for _ in range(_MOST_STEPS):
         slope = f_last - f_kept
         trial = last - np.divide(f_last * (last - kept), slope, out=np.zeros_like(last), where=slope != 0)
+        trial = np.clip(trial, np.minimum(kept, last), np.maximum(kept, last))
         f_trial = function(trial)
         if (np.minimum(np.abs(f_trial), np.abs(trial - last)) <= _PRECISION).all():
             return trial

@@ -133,8 +133,13 @@ def _slenderness(outcome: Outcome, figures: Figures, bridge: Footbridge) -> _Fou
         bar = _bar(outcome, number)
         limit = _MOST_SLENDER.get(bar.role, _MOST_SLENDER_MAIN)
         largest = float(ratio[strength.pieces.owner == number].max())
-        if largest > limit and not bar.tension_only:
+        if largest > limit and _may_be_pushed(outcome, number):
             yield number, "note", words.very_slender(largest, limit)
+
+
+def _may_be_pushed(outcome: Outcome, number: int) -> bool:
+    """Whether factored loads push a bar, as far as forces tell."""
+    return outcome.solved is None or bool(outcome.solved.figures.demand[1, number] > 0)
 
 
 def of_truss(bridge: Footbridge, outcome: Outcome, reactions: tuple[Reaction, ...]) -> Iterator[Finding]:
@@ -151,8 +156,9 @@ def of_truss(bridge: Footbridge, outcome: Outcome, reactions: tuple[Reaction, ..
             text = words.uplift(reaction.joint, figures.text(reaction.least, "force"), reaction.load)
             yield Finding("note", text, outcome.name)
     span = geometry.span
-    if outcome.solved is not None and outcome.solved.answer.displacement > span * _LARGE_DISPLACEMENT:
-        size = figures.text(outcome.solved.answer.displacement, "size")
+    largest = max((answer.displacement for answer in outcome.solved.answers), default=0.0) if outcome.solved else 0.0
+    if largest > span * _LARGE_DISPLACEMENT:
+        size = figures.text(largest, "size")
         text = words.large_displacement(size, figures.text(span, "length"))
         yield Finding("doubtful", text, outcome.name)
     yield from _double_bars(outcome.prepared)

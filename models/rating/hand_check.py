@@ -125,7 +125,7 @@ def _write_factor(outcome: Outcome, number: int, direction: int, resistance: Num
             if exceeded
             else "No live load acts on this bar that way."
         )
-    live_name = solved.answer.loads[load]
+    live_name = solved.loads[load]
     size = max(sign * float(figures.live[load, direction, number]), 0.0)
     live = sheet.given("LL", size, "force", f"{live_name} at its worst, as {name}")
     for level in basis.levels:

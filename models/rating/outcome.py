@@ -103,8 +103,7 @@ def _evaluate(
     hanging = solve_state(task, removed | slack, flexibilities)
     if hanging is None:
         return _Evaluated(task.prepared.standing(removed | slack), None, pulling)
-    both = Solved(pulling.standing, hanging.answer, worse(pulling.figures, hanging.figures))
-    return _Evaluated(standing, both, pulling)
+    return _Evaluated(standing, worse(pulling, hanging), pulling)
 
 
 def _cracked_in_tension(

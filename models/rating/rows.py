@@ -10,10 +10,12 @@ import numpy as np
 from numpy.typing import NDArray
 
 from models.finding import Finding
+from models.rating.answer import Answer
 from models.rating.outcome import Outcome
 from models.rating.result import BarRating, Effect, Reaction
 from models.rating.solved import Figures
 from models.rating.strength import CHECKS
+from models.resistance.protocol import Basis
 
 _DIRECTIONS: Final[tuple[Literal["tension", "compression"], ...]] = ("tension", "compression")
 
@@ -41,7 +43,7 @@ class _Table:
         self.outcome = outcome
         self.count = len(outcome.conditions)
         self.figures = outcome.solved.figures if outcome.solved else None
-        self.loads = outcome.solved.answer.loads if outcome.solved else ()
+        self.loads = outcome.solved.loads if outcome.solved else ()
         self.gone = np.zeros(self.count, bool)
         self.gone[sorted(outcome.severed | outcome.cracked)] = True
         self.direction = self._direction()
@@ -195,7 +197,7 @@ def _governs(outcome: Outcome, figures: Figures, number: int) -> tuple[str, str 
     if load < 0 or outcome.solved is None:
         return "dead load", None
     check = outcome.task.strength.check[figures.direction[number], number]
-    return CHECKS[check], outcome.solved.answer.loads[load]
+    return CHECKS[check], outcome.solved.loads[load]
 
 
 def _cell(value: float) -> float | None:
@@ -209,10 +211,15 @@ def _cells(values: NDArray[np.float64]) -> list[Any]:
 
 
 def reactions_of(outcome: Outcome) -> tuple[Reaction, ...]:
-    """Vertical reactions: under dead load, and the least under the load that lifts most."""
+    """Vertical reactions: under dead load, and the least under the load that lifts most, of all answers."""
     if outcome.solved is None:
         return ()
-    answer, basis = outcome.solved.answer, outcome.task.basis
+    joints = outcome.prepared.geometry.joints
+    by_answer = [_reactions(outcome.task.basis, answer, joints) for answer in outcome.solved.answers]
+    return tuple(min(same, key=lambda reaction: reaction.least) for same in zip(*by_answer, strict=True))
+
+
+def _reactions(basis: Basis, answer: Answer, joints: tuple[str, ...]) -> list[Reaction]:
     relieved = basis.components.least * answer.support_dead[0] + basis.wearing.least * answer.support_dead[1]
     gamma = max(level.live for level in basis.levels)
     found = []
@@ -220,12 +227,7 @@ def reactions_of(outcome: Outcome) -> tuple[Reaction, ...]:
         lifting = answer.support_live[:, place]
         load = int(np.argmin(lifting)) if len(lifting) else -1
         lifts = load >= 0 and lifting[load] < 0
-        found.append(
-            Reaction(
-                joint=outcome.prepared.geometry.joints[joint],
-                dead=float(answer.support_dead[:, place].sum()),
-                least=float(relieved[place] + (gamma * lifting[load] if lifts else 0.0)),
-                load=answer.loads[load] if lifts else None,
-            )
-        )
-    return tuple(found)
+        least = float(relieved[place] + (gamma * lifting[load] if lifts else 0.0))
+        dead = float(answer.support_dead[:, place].sum())
+        found.append(Reaction(joints[joint], dead, least, answer.loads[load] if lifts else None))
+    return found

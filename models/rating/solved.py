@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from dataclasses import dataclass, fields
+from functools import reduce
 from typing import Any
 
 import numpy as np
@@ -65,11 +66,16 @@ class Figures:
 
 @dataclass(frozen=True, eq=False)
 class Solved:
-    """A truss that stands, with its figures and the answer that reactions are read from."""
+    """A truss that stands, with its figures and the answers that they were taken from."""
 
     standing: Standing
-    answer: Answer
+    answers: tuple[Answer, ...]
     figures: Figures
+
+    @property
+    def loads(self) -> tuple[str, ...]:
+        """Names of the live loads, in the order of the figures."""
+        return self.answers[0].loads
 
 
 def solve_state(task: Task, removed: frozenset[int], flexibilities: tuple[Array, ...]) -> Solved | None:
@@ -89,19 +95,31 @@ def solve_state(task: Task, removed: frozenset[int], flexibilities: tuple[Array,
     if standing.response is not None:
         flexibilities = flexibilities[:1]
     solved = [_solve_once(task, standing, flexibility) for flexibility in flexibilities]
-    found = solved[0]
-    for other in solved[1:]:
-        found = Solved(standing, found.answer, worse(found.figures, other.figures))
-    return found
+    return reduce(worse, solved)
 
 
-def worse(one: Figures, other: Figures) -> Figures:
-    """Bar by bar the figures with the lower rating factor at the upper level."""
+def worse(one: Solved, other: Solved) -> Solved:
+    """Of two answers, bar by bar the one with the lower rating factor at the upper level.
+
+    What a bar may still lose, and what remains without it, is the lower of both answers, whichever governs now.
+    """
+    figures = _worse(one.figures, other.figures)
+    return Solved(one.standing, one.answers + other.answers, figures)
+
+
+def _worse(one: Figures, other: Figures) -> Figures:
     first, second = (np.nan_to_num(figures.lowest[-1], nan=np.inf, posinf=np.inf) for figures in (one, other))
     known = np.isnan(one.lowest[-1]) & ~np.isnan(other.lowest[-1])
     take = (second < first) | known
     pairs = {entry.name: (getattr(one, entry.name), getattr(other, entry.name)) for entry in fields(Figures)}
-    return Figures(**{name: np.where(take, b, a) for name, (a, b) in pairs.items()})
+    chosen = {name: np.where(take, b, a) for name, (a, b) in pairs.items()}
+    chosen["allowance"] = np.fmin(one.allowance, other.allowance)
+    out = np.isnan(other.lowest[-1])
+    # NaN in `without` means a mechanism, which is lower than any factor; but not of a bar that one answer left out.
+    chosen["without"] = np.where(
+        out, one.without, np.where(known, other.without, np.minimum(one.without, other.without))
+    )
+    return Figures(**chosen)
 
 
 def _solve_once(task: Task, standing: Standing, flexibility: Array) -> Solved:
@@ -133,7 +151,7 @@ def _solve_once(task: Task, standing: Standing, flexibility: Array) -> Solved:
         allowance=np.where(np.isinf(_spread(factors.lowest[-1], kept, whole)), np.inf, allowance),
         without=_spread(factors_without(task.basis, task.prepared, answer, capacity[:, :, kept]), kept, whole),
     )
-    return Solved(standing, answer, figures)
+    return Solved(standing, (answer,), figures)
 
 
 def _spread(values: NDArray[Any], kept: NDArray[np.int64], whole: int, empty: float = np.nan) -> NDArray[Any]:

@@ -148,7 +148,7 @@ def rating(site: Footbridge, findings: tuple[Finding, ...] = ()) -> Rating:
 def with_bar(whole: Rating, truss: str, bar: str, **changes: object) -> Rating:
     """The rating with some fields of one bar put otherwise."""
     old = whole.trusses[truss]
-    rows = tuple(replace(row, **changes) if row.bar == bar else row for row in old.bars)  # type: ignore[arg-type]
+    rows = tuple(row._replace(**changes) if row.bar == bar else row for row in old.bars)
     return replace(whole, trusses={**whole.trusses, truss: replace(old, bars=rows)})
 
 

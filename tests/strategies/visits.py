@@ -1,4 +1,4 @@
-"""Damage that visits record: even losses read or guessed, bars severed where the truss stands without, replaced ones."""
+"""Damage that visits record: even losses read or guessed, bars severed where the truss stands without, replaced."""
 
 from __future__ import annotations
 
