@@ -54,10 +54,15 @@ def loaded_areas(ordinates: Array, panels: Array) -> tuple[Array, Array]:
     both = size[..., :-1] + size[..., 1:]
     above = np.maximum(ordinates, 0.0)
     below = above - ordinates
-    weight = np.divide(panels / 2, both, out=np.zeros_like(both), where=both > 0.0)
-    positive = ((above[..., :-1] + above[..., 1:]) ** 2 * weight).sum(axis=-1)
-    negative = ((below[..., :-1] + below[..., 1:]) ** 2 * weight).sum(axis=-1)
-    return positive, -negative
+
+    def area(part: Array) -> Array:
+        ends = part[..., :-1] + part[..., 1:]
+        # The quotient first: it is at most 1, where the square of a tiny ordinate would vanish.
+        quotient = np.divide(ends, both, out=np.zeros_like(both), where=both > 0.0)
+        areas: Array = (quotient * ends * (panels / 2)).sum(axis=-1)
+        return areas
+
+    return area(above), -area(below)
 
 
 @dataclass(frozen=True, eq=False)
