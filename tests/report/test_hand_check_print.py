@@ -104,6 +104,7 @@ def test_every_line_of_every_bar_can_be_worked_again(path: Path, units: str) -> 
         (bar.bar, step.symbol, formula.in_numbers(step, figures), formula.result(step, figures))
         for bar in rated.rating.bars
         for step in rated.hand_check(bar.truss, bar.bar).steps
-        if reckon(formula.in_numbers(step, figures)) != pytest.approx(reckon(formula.result(step, figures)), rel=1e-3, abs=1e-16)
+        if reckon(formula.in_numbers(step, figures))
+        != pytest.approx(reckon(formula.result(step, figures)), rel=1e-3, abs=1e-16)
     ]
     assert apart == []
