@@ -135,37 +135,38 @@ def texts(condition: BarCondition, level: str = "doubtful") -> list[str]:
     return [finding.text for finding in condition.findings if finding.level == level]
 
 
-STATIONS = st.one_of(st.sampled_from([0.0, 0.5, 0.51, 1.0]), st.floats(-0.5, 1.5))
-VALUES = st.one_of(st.sampled_from([0.0, 3.0, 4.0, 4.2, 5.0, 5.4]), st.floats(-1, 8))
-EXTENTS = st.one_of(st.none(), st.sampled_from([0.2, 1.0]), st.floats(-1, 6))
+def _between(low: float, high: float) -> st.SearchStrategy[float]:
+    """Numbers as people type them, with four decimals at most."""
+    return st.integers(int(low * 10000), int(high * 10000)).map(lambda number: number / 10000)
 
 
-@st.composite
-def readings(draw: st.DrawFn) -> Reading:
-    """Any reading on the tube, strange ones too."""
-    values = draw(st.lists(VALUES, min_size=1, max_size=3))
-    instrument = draw(st.sampled_from([None, "good gauge", "lost gauge"]))
-    return reading(
-        draw(STATIONS),
-        *values,
-        plate=draw(st.sampled_from(PLATES[:2])),
-        extent=draw(EXTENTS),
-        cleaned=draw(st.sampled_from([None, False, True])),
-        instrument=instrument,
-    )
+STATIONS = st.one_of(st.sampled_from([0.0, 0.5, 0.51, 1.0]), _between(-0.5, 1.5))
+VALUES = st.one_of(st.sampled_from([0.0, 3.0, 4.0, 4.2, 5.0, 5.4]), _between(-1, 8))
+EXTENTS = st.one_of(st.none(), st.sampled_from([0.2, 1.0]), _between(-1, 6))
+READINGS = st.builds(
+    lambda station, values, plate, extent, cleaned, instrument: reading(
+        station, *values, plate=plate, extent=extent, cleaned=cleaned, instrument=instrument
+    ),
+    STATIONS,
+    st.lists(VALUES, min_size=1, max_size=3),
+    st.sampled_from(PLATES[:2]),
+    EXTENTS,
+    st.sampled_from([None, False, True]),
+    st.sampled_from([None, "good gauge", "lost gauge"]),
+)
+"""Any reading on the tube, strange ones too."""
 
-
-LOSSES = st.one_of(st.sampled_from([0.0, 0.1, 0.5, 1.0]), st.floats(-0.2, 1.2))
+LOSSES = st.one_of(st.sampled_from([0.0, 0.1, 0.5, 1.0]), _between(-0.2, 1.2))
 BOWS = st.builds(
     Bow,
-    st.floats(-200, 200).map(millimetres),
-    st.none() | st.floats(-1, 4000).map(millimetres),
+    _between(-200, 200).map(millimetres),
+    st.none() | _between(-1, 4000).map(millimetres),
     st.sampled_from([None, "in plane", "out of plane"]),
 )
 SAID: dict[str, st.SearchStrategy[Any]] = {
     "seen": st.sampled_from(["hands on", "at a distance", "not seen"]),
     "state": st.sampled_from(["good", "fair", "poor", "severe"]),
-    "readings": st.lists(readings(), min_size=1, max_size=2).map(tuple),
+    "readings": st.lists(READINGS, min_size=1, max_size=2).map(tuple),
     "estimated_loss": LOSSES,
     "bow": BOWS,
     "crack": st.sampled_from([Crack(), Crack(millimetres(20)), "no crack"]),
@@ -176,17 +177,26 @@ SAID: dict[str, st.SearchStrategy[Any]] = {
 }
 
 
-@st.composite
-def said(draw: st.DrawFn, *, replacing: bool = False) -> dict[str, Any]:
-    """What an entry says: one or two things about the tube."""
-    keys = draw(st.lists(st.sampled_from([*SAID, "readings", "readings"]), min_size=1, max_size=2, unique=True))
-    found = {key: draw(SAID[key]) for key in keys}
+KEYS = st.lists(st.sampled_from([*SAID, "readings", "readings"]), min_size=1, max_size=2, unique=True)
+ANY_STATION = st.none() | STATIONS
+RARELY = st.integers(0, 9)
+NEW = st.sampled_from([None, "tube", "thin tube"])
+DEVICES = st.sampled_from("AB")
+RELATIONS = st.sampled_from(["retracts", "chooses"])
+
+
+def _said(draw: st.DrawFn, known: list[str], replacing: bool) -> dict[str, Any]:
+    """What an entry says: one or two things about the tube, or something about an entry before it."""
+    rare = draw(RARELY)
+    if rare in (7, 8) and known:
+        return {draw(RELATIONS): draw(st.sampled_from([*known, "nobody"]))}
+    found = {key: draw(SAID[key]) for key in draw(KEYS)}
     if "estimated_loss" in found:
         extent = draw(EXTENTS)
         found["extent"] = None if extent is None else Quantity(f"{extent} m", extent)
-        found["station"] = draw(st.none() | STATIONS)
-    if replacing and draw(st.integers(0, 9)) == 9:
-        found["replaced"] = Replaced(draw(st.sampled_from([None, "tube", "thin tube"])))
+        found["station"] = draw(ANY_STATION)
+    if rare == 9 and replacing:
+        found["replaced"] = Replaced(draw(NEW))
     return found
 
 
@@ -198,11 +208,8 @@ def journals(draw: st.DrawFn, visits: int = 3, entries: int = 4, *, replacing: b
     for year in range(draw(st.integers(1, visits))):
         written = []
         for sequence in range(draw(st.integers(0, entries))):
-            about = draw(said(replacing=replacing))
-            if known and draw(st.integers(0, 4)) == 4:
-                about = {draw(st.sampled_from(["retracts", "chooses"])): draw(st.sampled_from([*known, "nobody"]))}
-            name = f"e{year}.{sequence}"
-            known.append(name)
-            written.append(Entry(name, TRUSS, TUBE, draw(st.sampled_from("AB")), sequence, **about))
+            about = _said(draw, known, replacing)
+            known.append(f"e{year}.{sequence}")
+            written.append(Entry(known[-1], TRUSS, TUBE, draw(DEVICES), sequence, **about))
         made.append(visit(f"{2020 + year}-05-14", *written))
     return Journal(tuple(made))
