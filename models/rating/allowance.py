@@ -23,6 +23,8 @@ MOST: Final = 0.95
 
 _PRECISION: Final = 1e-10
 _MOST_STEPS: Final = 100
+_HALVING: Final = 8
+"""Every so many steps the bracket is halved: functions that rise late would creep otherwise."""
 
 
 def loss_allowance(
@@ -129,14 +131,17 @@ def find_root(function: Callable[[Array], Array], low: Array, high: Array, at_lo
     1973.
     """
     kept, f_kept, last, f_last = low, at_low, high, at_high
-    for _ in range(_MOST_STEPS):
+    for step in range(1, _MOST_STEPS + 1):
         slope = f_last - f_kept
         trial = last - np.divide(f_last * (last - kept), slope, out=np.zeros_like(last), where=slope != 0)
         trial = np.clip(trial, np.minimum(kept, last), np.maximum(kept, last))
+        if step % _HALVING == 0:
+            trial = np.where(np.abs(f_last) > _PRECISION, (kept + last) / 2, last)
         f_trial = function(trial)
-        if (np.minimum(np.abs(f_trial), np.abs(trial - last)) <= _PRECISION).all():
-            return trial
         crossed = np.sign(f_trial) != np.sign(f_last)
+        left = np.abs(trial - np.where(crossed, last, kept))
+        if (np.minimum(np.abs(f_trial), left) <= _PRECISION).all():
+            return trial
         ratio = 1 - np.divide(f_trial, f_last, out=np.ones_like(f_last), where=f_last != 0)
         brought_down = f_kept * np.where(ratio > 0, ratio, 0.5)
         kept, f_kept = np.where(crossed, last, kept), np.where(crossed, f_last, brought_down)

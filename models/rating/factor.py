@@ -73,7 +73,7 @@ def rating_factors(basis: Basis, capacity: Array, dead: Array, live: Array) -> F
     exceeds = room < 0
     size = live * _SIGNS.reshape(1, 2, *([1] * (live.ndim - 2)))
     gamma = np.array([level.live for level in basis.levels]).reshape(-1, 1, *([1] * (live.ndim - 1)))
-    with np.errstate(divide="ignore", invalid="ignore"):
+    with np.errstate(divide="ignore", invalid="ignore", over="ignore"):
         factors = room[:, None] / (gamma * size[None])
     factors = np.where(size[None] > 0, factors, np.inf)
     factors = np.where(exceeds[:, None], 0.0, factors)
