@@ -1,0 +1,122 @@
+"""How long a rating takes, as ratios to things that everybody has: a dense solve, sympy's truss.
+
+Milliseconds are printed and never judged; a ratio above twice what is stated fails. Run it by hand or in a build:
+
+    python tests/benchmark/run.py
+"""
+
+from __future__ import annotations
+
+import json
+import sys
+import time
+from collections.abc import Callable
+from pathlib import Path
+from typing import Any
+
+import numpy as np
+from sympy import Float
+from sympy.physics.continuum_mechanics.truss import Truss as SympyTruss
+
+sys.path[:0] = [str(Path(__file__).parents[2]), str(Path(__file__).parents[1])]
+
+from benchmark.pratt import pratt, reading  # noqa: E402
+
+from inspector.exchange import site  # noqa: E402
+from models.condition import fold_all  # noqa: E402
+from models.rating import Provenance, prepare, rate  # noqa: E402
+from models.resistance import basis  # noqa: E402
+from models.statics.geometry import equilibrium_matrix  # noqa: E402
+
+MADE_FROM = Provenance("benchmark", "benchmark")
+
+Job = Callable[[], Any]
+
+
+def best(jobs: dict[str, Job], rounds: int) -> dict[str, float]:
+    """The shortest time of each job in ms, the jobs taking turns so that a slow moment hits all alike."""
+    times: dict[str, list[float]] = {name: [] for name in jobs}
+    for _ in range(rounds):
+        for name, job in jobs.items():
+            start = time.perf_counter()
+            job()
+            times[name].append(1e3 * (time.perf_counter() - start))
+    return {name: min(taken) for name, taken in times.items()}
+
+
+class Case:
+    """A Pratt truss before and after one more reading."""
+
+    def __init__(self, panels: int) -> None:
+        document = pratt(panels)
+        found = site.read(json.dumps(document))
+        document["visits"][0]["observations"].append(reading("L1-L2", 7.0))
+        self.document, self.bridge = document, found.bridge
+        self.after = site.read(json.dumps(document)).journal
+        self.prepared = prepare(found.bridge)
+        self.before = fold_all(found.bridge, found.journal)
+        self.basis = basis(found.bridge.rating.basis)
+        self.geometry = self.prepared.trusses["only"].geometry
+        self.rate_again()
+
+    @property
+    def bars(self) -> int:
+        """How many bars the truss has."""
+        return len(self.geometry.bars)
+
+    def rate_again(self) -> Any:
+        """Fold the journal with the new reading, and rate every bar and the structure."""
+        condition = fold_all(self.bridge, self.after, self.before)
+        return rate(self.prepared, condition, self.basis, MADE_FROM)
+
+    def dense_solve(self) -> Job:
+        """One solve of the truss's stiffness system with a right-hand side a deck joint."""
+        matrix = equilibrium_matrix(self.geometry)[~self.geometry.held]
+        stiffness = 1e8 * matrix @ matrix.T
+        loads = np.zeros((len(stiffness), len(self.geometry.deck)))
+        loads[np.arange(len(self.geometry.deck)), np.arange(len(self.geometry.deck))] = 1.0
+        return lambda: np.linalg.solve(stiffness, loads)
+
+    def sympy_solve(self) -> Job:
+        """The same truss, one load, by sympy's truss."""
+        truss = self.document["trusses"]["only"]
+
+        def solve() -> None:
+            model = SympyTruss()
+            model.add_node(*[(name, *(Float(size.split()[0]) for size in at)) for name, at in truss["joints"].items()])
+            model.add_member(*[(bar["id"], bar["from"], bar["to"]) for bar in truss["bars"]])
+            model.apply_support(
+                *[(name, "pinned" if kind == "pin" else kind) for name, kind in truss["supports"].items()]
+            )
+            model.apply_load((truss["deck joints"][1], 1, 270))
+            model.solve()
+
+        return solve
+
+
+def row(name: str, time_of: float, reference: float, stated: float, *, at_least: bool = False) -> bool:
+    """Print one ratio; whether it is within twice what is stated."""
+    ratio = time_of / reference
+    kept = ratio >= stated / 2 if at_least else ratio <= 2 * stated
+    aim = f"aim {'over' if at_least else 'under'} {stated:g}"
+    print(f"{name:58} {time_of:10.3f} ms / {reference:9.3f} ms = {ratio:9.1f}  ({aim}){'' if kept else '  FAILED'}")
+    return kept
+
+
+def main() -> int:
+    """Measure, print, judge the ratios."""
+    twenty = Case(20)
+    times = best({"rating": twenty.rate_again, "solve": twenty.dense_solve()}, 200)
+    kept = [row(f"rating of {twenty.bars} bars after a reading / dense solve", times["rating"], times["solve"], 25)]
+    small, large = Case(8), Case(200)
+    growth = best({"small": small.rate_again, "large": large.rate_again}, 10)
+    solves = best({"small": small.dense_solve(), "large": large.dense_solve()}, 10)
+    kept.append(row(f"rating of {large.bars} bars / of {small.bars} bars", growth["large"], growth["small"], 30))
+    kept.append(row(f"dense solve of {large.bars} bars, rating / solve", growth["large"], solves["large"], 25))
+    sympy_time = best({"sympy": twenty.sympy_solve()}, 1)["sympy"]
+    kept.append(row("sympy's truss, one load / full rating", sympy_time, times["rating"], 1000, at_least=True))
+    return 0 if all(kept) else 1
+
+
+if __name__ == "__main__":
+    sys.exit(main())
