@@ -213,7 +213,7 @@ def _bar(sheet: _Sheet, bar: Bar, stretch: Stretch) -> list[Line]:
     band = sheet.look.view.band(rated, sheet.look.level)
     if rated.check in GONE:
         axis = Line((stretch.start, stretch.end), "axis", "medium", "dashed", of=bar.id)
-        lines = [axis, *cross(stretch.beside(0.5, 1e-12), stretch.angle, sheet.height, bar.id)]
+        lines = [axis, *cross(_off(stretch, 0.35, 0.0), stretch.angle, sheet.height, bar.id)]
     else:
         edge = 0.5 * stretch.depth
         short = min(0.3 * sheet.height / stretch.length, 0.2) if stretch.length else 0.0

@@ -9,6 +9,7 @@ from __future__ import annotations
 
 from collections.abc import Iterable, Mapping, Sequence
 from dataclasses import dataclass
+from functools import lru_cache
 from types import MappingProxyType
 from typing import Final, Literal
 
@@ -109,6 +110,7 @@ _NARROW: Final = frozenset("ijlIft.,:;'|!()[]/- r")
 _WIDE: Final = frozenset("mwMW@%+=<>≥≤×—")
 
 
+@lru_cache(maxsize=4096)
 def text_width(text: str) -> float:
     """Length of a text in text heights, never short of a bold sans-serif face such as DejaVu Sans."""
     return sum(0.5 if sign in _NARROW else 1.11 if sign in _WIDE else 0.86 if sign.isupper() else 0.72 for sign in text)

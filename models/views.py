@@ -50,7 +50,7 @@ GONE: Final = ("severed", "cracked")
 
 _BELOW = Band("below 1", "vermillion", "heavy", "solid")
 _NEAR = Band("1 to below 1.5", "orange", "medium", "dashed")
-_ABOVE = Band("1.5 and more", "sky blue", "thin", "dash dot")
+_ABOVE = Band("1.5 and more", "sky blue", "thin", "blank")
 _NONE = Band("no rating factor", "paper", "thin", "dotted")
 
 

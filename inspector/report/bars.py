@@ -51,7 +51,7 @@ def _table(
         "see",
     )  # fmt: skip
     levels = len(rating.levels)
-    shares = (15, 36, 44, 27, 56, 28, 25, 28, 27, 28, 28, 30, 30, 66, 32, 27, *(40,) * levels, 29, 23, 43, 30)
+    shares = (14, 35, 43, 26, 56, 29, 24, 28, 29, 28, 28, 30, 29, 66, 31, 27, *(39,) * levels, 28, 23, 43, 30)
     align = "r" + "llll" + "rrrrrrrr" + "ll" + "r" * (levels + 4) + "l"
     rows = [
         (number, *_bar(bar, rating, figures), marks.get((bar.truss, bar.bar), ""))

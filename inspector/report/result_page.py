@@ -59,7 +59,7 @@ def _headline(rating: Rating) -> list[Flowable]:
         f"{level}: {_rf(found.rating_factor.get(level))}" for level in rating.levels if level != rating.upper_level
     ]
     story: list[Flowable] = [
-        gap(4),
+        gap(10),
         text(f"Lowest rating factor, {rating.upper_level} level", STRONG),
         text(number, FIGURE),
         gap(8),

@@ -49,6 +49,8 @@ STRONG: Final = _style("strong", 8.5, bold=True, after=3)
 STAMP: Final = _style("stamp", 11, bold=True, after=4)
 FIGURE: Final = _style("figure", 26, bold=True)
 CELL: Final = _style("cell", 6.3)
+CELL_HEAD: Final = _style("cell head", 5.9, bold=True)
+CELL_HEAD_RIGHT: Final = _style("cell head right", 5.9, bold=True, alignment=2)
 CELL_BOLD: Final = _style("cell bold", 6.3, bold=True)
 CELL_RIGHT: Final = _style("cell right", 6.3, alignment=2)
 CELL_RIGHT_BOLD: Final = _style("cell right bold", 6.3, bold=True, alignment=2)
@@ -107,7 +109,7 @@ def table(
         ]
         for number, row in enumerate(rows)
     ]
-    top = [cell(name, side, bold=True) for name, side in zip(head, sides, strict=True)]
+    top = [text(name, CELL_HEAD_RIGHT if side == "r" else CELL_HEAD) for name, side in zip(head, sides, strict=True)]
     commands: list[tuple[Any, ...]] = [
         ("FONT", (0, 0), (-1, -1), REGULAR, 6.3),
         ("VALIGN", (0, 0), (-1, -1), "TOP"),
@@ -116,11 +118,11 @@ def table(
         ("LINEABOVE", (0, 0), (-1, 0), 0.8, INK),
         ("LINEBELOW", (0, 0), (-1, 0), 0.8, INK),
         ("LINEBELOW", (0, 1), (-1, -1), 0.25, HAIR),
-        ("LEFTPADDING", (0, 0), (-1, -1), 2),
-        ("RIGHTPADDING", (0, 0), (-1, -1), 2),
+        ("LEFTPADDING", (0, 0), (-1, -1), 1.5),
+        ("RIGHTPADDING", (0, 0), (-1, -1), 1.5),
         ("TOPPADDING", (0, 0), (-1, -1), 1.4),
         ("BOTTOMPADDING", (0, 0), (-1, -1), 1.8),
-        *(("LEFTPADDING", (k, 0), (k, -1), 6) for k in range(1, len(sides)) if sides[k - 1 : k + 1] == ["r", "l"]),
+        *(("LEFTPADDING", (k, 0), (k, -1), 5) for k in range(1, len(sides)) if sides[k - 1 : k + 1] == ["r", "l"]),
     ]
     tall = any(_lines(value, share) > _MOST_LINES for row in rows for value, share in zip(row, widths, strict=True))
     return Table([top, *body], colWidths=widths, repeatRows=1, style=commands, hAlign="LEFT", splitInRow=int(tall))

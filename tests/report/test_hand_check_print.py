@@ -2,18 +2,13 @@
 
 from __future__ import annotations
 
-from pathlib import Path
-
 import pytest
-from report import invented
+from report import invented, sample
 from report.reckon import reckon
 
-from inspector import desk
 from models import formula
 from models.calculation import HandCheck, Step, Traced, choose, least
 from models.words import Figures
-
-SAMPLES = sorted((Path(__file__).parents[2] / "sample_sites").glob("*.json"))
 
 
 def line(made: Traced, symbol: str = "y") -> Step:
@@ -95,10 +90,10 @@ def test_every_kind_of_operation_can_be_worked_again(units: str) -> None:
 
 
 @pytest.mark.parametrize("units", ["SI", "US"])
-@pytest.mark.parametrize("path", SAMPLES, ids=lambda path: path.stem)
-def test_every_line_of_every_bar_can_be_worked_again(path: Path, units: str) -> None:
+@pytest.mark.parametrize("name", sample.NAMES)
+def test_every_line_of_every_bar_can_be_worked_again(name: str, units: str) -> None:
     """A reviewer gets each printed value of each bar from the numbers in that line, within 0.1 %."""
-    rated = desk.rate(desk.check(path))
+    rated = sample.rated(name)
     figures = Figures(units)
     apart = [
         (bar.bar, step.symbol, formula.in_numbers(step, figures), formula.result(step, figures))

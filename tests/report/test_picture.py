@@ -3,21 +3,17 @@
 from __future__ import annotations
 
 from dataclasses import replace
-from pathlib import Path
 
 import pytest
-from report import invented
+from report import invented, sample
 from reportlab.pdfbase.pdfmetrics import stringWidth
 
-from inspector import desk
 from inspector.report.fonts import BOLD, REGULAR, register
 from models.bridge import Truss
 from models.elevation import elevation, in_parts
 from models.picture import PALETTE, Picture, Text, overlaps, text_width
 from models.rating.result import TrussRating
 from models.views import VIEWS
-
-SAMPLES = sorted((Path(__file__).parents[2] / "sample_sites").glob("*.json"))
 
 
 def rated(truss: Truss) -> TrussRating:
@@ -43,12 +39,12 @@ def test_no_label_covers_another_on_a_crowded_truss(truss: Truss, view: str) -> 
         assert overlaps(picture) == []
 
 
-@pytest.mark.parametrize("path", SAMPLES, ids=lambda path: path.stem)
-def test_no_label_covers_another_on_the_sample_sites(path: Path) -> None:
+@pytest.mark.parametrize("name", sample.NAMES)
+def test_no_label_covers_another_on_the_sample_sites(name: str) -> None:
     """The drawings of all sample sites can be read."""
-    found = desk.rate(desk.check(path))
-    for name, truss in found.rating.trusses.items():
-        for picture in in_parts(found.bridge.trusses[name], truss):
+    found = sample.rated(name)
+    for side, truss in found.rating.trusses.items():
+        for picture in in_parts(found.bridge.trusses[side], truss):
             assert overlaps(picture) == []
 
 

@@ -265,3 +265,11 @@ def test_a_bridge_in_feet_and_kips_is_printed_in_them() -> None:
     pages = printed(invented.rating(invented.bridge()), units="US")
     assert "margin kip" in pages.whole
     assert "kN" not in pages.whole
+
+
+def test_the_other_answer_stands_beside_the_headline() -> None:
+    """Where cracked or slack bars were asked the other way round, both answers are on the result page."""
+    rating = invented.rating(invented.bridge())
+    other = Governing({"inventory": 0.9, "operating": 1.23}, "upstream", "L0-L1", "tension yield", "crowd")
+    pages = printed(replace(rating, if_cracked_bars_hold=other))
+    assert "if cracked bars hold 1.23 upstream L0-L1 tension yield crowd" in pages.texts[1]

@@ -7,7 +7,7 @@ import subprocess
 import sys
 from pathlib import Path
 
-from report import invented
+from report import invented, sample
 
 from inspector import desk
 
@@ -38,7 +38,7 @@ def test_two_processes_print_the_same_bytes() -> None:
 
 def test_printing_twice_changes_nothing() -> None:
     """A second report in the same process equals the first."""
-    rated = desk.rate(desk.check(SAMPLE))
+    rated = sample.rated(SAMPLE.stem)
     assert desk.report(rated) == desk.report(rated)
 
 
