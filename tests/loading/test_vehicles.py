@@ -82,14 +82,18 @@ def test_where_positions_are_counted_from_does_not_matter(
     assert moved == pytest.approx(there, abs=1e-6)
 
 
-@pytest.mark.parametrize("ordinates", [[-0.5, 1.0, -1.0], [-1.0, 1.0, -0.5]], ids=["first end", "last end"])
-def test_an_axle_that_left_the_deck_relieves_no_more(ordinates: list[float]) -> None:
+@pytest.mark.parametrize(
+    ("x", "ordinates"),
+    [([0.0, 2.0, 5.0], [-0.5, 1.0, -1.0]), ([0.0, 3.0, 5.0], [-1.0, 1.0, -0.5])],
+    ids=["first end", "last end"],
+)
+def test_an_axle_that_left_the_deck_relieves_no_more(x: list[float], ordinates: list[float]) -> None:
     """At an end where the line stops abruptly, the relieving axle just beyond it does not count.
 
     Axles 2 m apart: with one over the middle and one over the end 1 - 0.5, with that one just off the deck 1.
     """
-    x = np.array([0.0, 2.0, 4.0])
-    largest, least = Placed(axle_places(x, np.array([0.0, 2.0]), np.ones(2)), (1.0,)).extremes(np.array(ordinates))
+    places = axle_places(np.array(x), np.array([0.0, 2.0]), np.ones(2))
+    largest, least = Placed(places, (1.0,)).extremes(np.array(ordinates))
     assert (largest, least) == pytest.approx((1.0, -1.0))
 
 
