@@ -8,7 +8,7 @@ from dataclasses import replace
 from reportlab.platypus import Flowable
 
 from inspector.report.findings import Told, marks_by_bar
-from inspector.report.style import BODY, NOTE, heading, part, table, text
+from inspector.report.style import BODY, NOTE, caption, heading, part, table, text
 from models import words
 from models.journal import Bow, Crack, Entry, Journal, Reading, Visit
 from models.journal_order import by_date, standing
@@ -113,7 +113,7 @@ def _looks(visit: Visit, marks: Marks, width: float) -> list[Flowable]:
         return []
     rows = [(truss, seen, state, change, ", ".join(bars)) for (truss, seen, state, change), bars in alike.items()]
     head = ("truss", "seen", "state", "remark", "bars")
-    return [text("Bars looked at", NOTE), table(head, rows, (4, 4, 2.5, 6, 30), width)]
+    return [*caption("Bars looked at"), table(head, rows, (4, 4, 2.5, 6, 30), width)]
 
 
 def _entries(visit: Visit, marks: Marks, width: float) -> list[Flowable]:
@@ -129,7 +129,7 @@ def _entries(visit: Visit, marks: Marks, width: float) -> list[Flowable]:
     ]  # fmt: skip
     if not rows:
         return []
-    return [text("Other entries", NOTE), table(head, rows, (4, 4, 6, 2.6, 8, 8, 5, 6, 3.4), width)]
+    return [*caption("Other entries"), table(head, rows, (4, 4, 6, 2.6, 8, 8, 5, 6, 3.4), width)]
 
 
 def _only_read(entry: Entry) -> bool:
@@ -191,4 +191,4 @@ def _calls(visit: Visit, width: float) -> list[Flowable]:
     if not visit.calls:
         return []
     rows = [(call.who or "", call.when or "", call.said or "", call.left or "") for call in visit.calls]
-    return [text("Who was told", NOTE), table(("who", "when", "said", "left"), rows, (4, 3, 8, 4), width)]
+    return [*caption("Who was told"), table(("who", "when", "said", "left"), rows, (4, 3, 8, 4), width)]

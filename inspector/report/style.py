@@ -82,6 +82,11 @@ def heading(title: str, room: float = 60) -> list[Flowable]:
     return [CondPageBreak(room + 20), text(title, HEADING)]
 
 
+def caption(words: str) -> list[Flowable]:
+    """A small heading of a table, never alone at a page's end."""
+    return [CondPageBreak(60), text(words, NOTE)]
+
+
 def gap(height: float) -> Any:
     """Empty height, points."""
     return Spacer(1, height)
