@@ -186,6 +186,7 @@ def test_a_replacement_ends_what_was_recorded_before() -> None:
     assert not found.severed
     assert found.crack is None
     assert not found.findings
+    assert not tube(day(old, entry(replaced=Replaced(), at=1))).has_reading
     again = tube(years((old,), (entry(replaced=Replaced()), entry(reading(0.5, 4.9), at=1))))
     assert at(again, 0.5) == 4.9
     assert not texts(again)

@@ -146,6 +146,16 @@ def test_where_the_earlier_one_reached_further_the_smaller_holds(later: float, b
     assert at(found, 0.44) == 5.0
 
 
+def test_what_the_earlier_one_still_holds_is_as_old_and_as_clean_as_the_worse_of_both() -> None:
+    """Beyond the later reading the evidence is the earlier visit's, and clean only where both were."""
+    first = entry(reading(0.5, 4.0, extent=0.4, cleaned=True))
+    found = tube(years((first,), (entry(reading(0.5, 4.2, extent=0.2, cleaned=False)),)))
+    assert found.strength.visit[:, 1].tolist() == [-1, 0, 1, 0, -1]
+    assert not found.strength.cleaned.any()
+    found = tube(years((first,), (entry(reading(0.5, 4.2, extent=0.2, cleaned=True)),)))
+    assert found.strength.cleaned[:, 1].tolist() == [False, True, True, True, False]
+
+
 def test_an_extent_found_later_ends_the_doubt_about_flexibility() -> None:
     """Once the extent of a loss is known, there is one flexibility."""
     found = tube(years((entry(reading(0.5, 4.0)),), (entry(reading(0.5, 3.9, extent=0.1)),)))
@@ -337,6 +347,19 @@ def test_within_the_error_steel_may_seem_to_grow() -> None:
     gauged = tube(years((entry(reading(0.5, 3.0)),), (entry(reading(0.5, 3.3, instrument="good gauge")),)))
     assert at(gauged, 0.5) == 3.0
     assert not texts(gauged, "assumed")
+
+
+def test_steel_is_compared_with_the_last_reading_there() -> None:
+    """Not with one that the last has replaced: small rises inside the error may follow each other."""
+    found = tube(years(*((entry(reading(0.5, value)),) for value in (3.0, 3.25, 3.5))))
+    assert at(found, 0.5) == 3.5
+    assert not texts(found)
+
+
+def test_a_drop_inside_the_error_asks_nothing() -> None:
+    """0.3 mm may be the gauge, 0.4 mm is not."""
+    assert not texts(tube(years((entry(reading(0.5, 4.5)),), (entry(reading(0.5, 4.2)),))))
+    assert texts(tube(years((entry(reading(0.5, 4.5)),), (entry(reading(0.5, 4.1)),))))
 
 
 def test_a_drop_beyond_the_error_asks_for_a_second_look() -> None:

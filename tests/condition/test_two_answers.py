@@ -62,6 +62,15 @@ def test_a_choice_puts_out_only_what_is_about_the_same_thing() -> None:
     assert at(found, 0.5) == at(found, 0.53) - 2.0 == 3.0
 
 
+def test_a_choice_reaches_its_own_visit_alone() -> None:
+    """What an earlier visit read stays wherever it reached further."""
+    first = visit("2024-05-14", entry(reading(0.5, 4.0, extent=0.4)))
+    second = visit("2026-05-14", entry(reading(0.5, 4.1, extent=0.2), device="B", name="b"))
+    found = tube(Journal((first, second, visit("2027-01-01", entry(name="c", chooses="b")))))
+    assert at(found, 0.5) == 4.1
+    assert at(found, 0.46) == 4.0
+
+
 def test_the_later_choice_counts() -> None:
     """A choice replaces an earlier one by the same device."""
     choices = [entry(name="c1", at=1, chooses="high"), entry(name="c2", at=2, chooses="low")]
