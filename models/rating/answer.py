@@ -60,15 +60,14 @@ def solve(prepared: PreparedTruss, standing: Standing, stock: Stock, flexibility
     response = standing.respond(flexibility)
     down = -response.forces[:, 1::2]
     joint_load = joint_dead_load(prepared, stock)
-    dead = _without_noise(joint_load @ down.T, joint_load @ np.abs(down).T, response.noise)
-    ordinates = down[:, prepared.geometry.deck]
-    ordinates = _without_noise(ordinates, np.abs(ordinates).max(initial=0.0), response.noise)
+    dead = _without_noise(joint_load @ down.T, response.noise)
+    ordinates = _without_noise(down[:, prepared.geometry.deck].T, response.noise).T
     supports = np.flatnonzero(standing.geometry.held[1::2])
     lift = -response.reactions[1::2, 1::2][supports]
     loads = tuple(name for name, pattern in prepared.patterns.items() if pattern is not None)
     rows = np.concatenate([ordinates, lift[:, prepared.geometry.deck]])
     found = np.array([pattern.extremes(rows) for pattern in prepared.patterns.values() if pattern is not None])
-    found = found.reshape(len(loads), 2, len(rows))
+    found = found.reshape(len(loads), 2, len(rows)) + 0.0  # no negative zeros
     bars = len(ordinates)
     return Answer(
         standing=standing,
@@ -84,9 +83,14 @@ def solve(prepared: PreparedTruss, standing: Standing, stock: Stock, flexibility
     )
 
 
-def _without_noise(force: Array, size: Array | float, noise: float) -> Array:
-    """Forces that are nothing but rounding error become zero, so that no rating factor rests on them."""
-    return np.where(np.abs(force) <= noise * size, 0.0, force)
+def _without_noise(force: Array, noise: float) -> Array:
+    """Forces that are nothing but rounding error become zero, so that no rating factor rests on them.
+
+    Parameters
+    ----------
+    force : (cases, m); small is what is below the error to expect of the largest force in the truss.
+    """
+    return np.where(np.abs(force) <= noise * np.abs(force).max(initial=0.0), 0.0, force)
 
 
 def _displacement(prepared: PreparedTruss, response: Response, dead: Array, flexibility: Array) -> float:
