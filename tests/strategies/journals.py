@@ -159,8 +159,8 @@ READINGS = st.builds(
 LOSSES = st.one_of(st.sampled_from([0.0, 0.1, 0.5, 1.0]), _between(-0.2, 1.2))
 BOWS = st.builds(
     Bow,
-    _between(-200, 200).map(millimetres),
-    st.none() | _between(-1, 4000).map(millimetres),
+    st.integers(-200, 200).map(millimetres),
+    st.none() | st.integers(-1, 4000).map(millimetres),
     st.sampled_from([None, "in plane", "out of plane"]),
 )
 SAID: dict[str, st.SearchStrategy[Any]] = {
