@@ -8,7 +8,6 @@ from typing import Annotated
 
 import typer
 from rich.box import SIMPLE_HEAD
-from rich.console import Console
 from rich.table import Table
 from rich.text import Text
 
@@ -46,7 +45,9 @@ def demo(
     if found.bridge.notes:
         out.print(Text(found.bridge.notes))
         out.print()
-    rated = _log_last_visit(out, found, folder / _STORE)
+    with shown.console(error=True).status("Logging the last visit, rating after every entry ..."):
+        table, rated = _log_last_visit(found, folder / _STORE)
+    out.print(table)
     shown.rating_of(out, rated)
     result, report = folder / f"{sample}-rating.json", folder / f"{sample}-rating.pdf"
     result.write_text(desk.result_text(rated) + "\n", encoding="utf-8")
@@ -57,8 +58,13 @@ def demo(
         out.print(f"{what + ':':8}{path}", soft_wrap=True)
 
 
-def _log_last_visit(out: Console, found: Site, path: Path) -> Rated:
-    """Save the bridge as it was before its last visit, then log that visit; the rating after its last entry."""
+def _log_last_visit(found: Site, path: Path) -> tuple[Table, Rated]:
+    """Save the bridge as it was before its last visit, then log that visit.
+
+    Returns
+    -------
+    A line an entry with the figures before and after it, and the rating after the last one.
+    """
     # The store is imported by those commands alone that need it.
     from inspector.store import open_store  # noqa: PLC0415
 
@@ -77,8 +83,7 @@ def _log_last_visit(out: Console, found: Site, path: Path) -> Rated:
             after = desk.rate(Site(bridge, store.journal(bridge.id)), before)
             table.add_row(*_entry_cells(stored, before, after))
             before = after
-    out.print(table)
-    return before
+    return table, before
 
 
 def _entries_table(title: str) -> Table:

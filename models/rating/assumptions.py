@@ -8,6 +8,7 @@ from models import words
 from models.bridge import Footbridge
 from models.loading.dead import ASSUMED_CONNECTION_ALLOWANCE
 from models.rating.outcome import Outcome
+from models.rating.prepare import HALF_THROUGH_K, held_by_frames
 
 
 def assumptions_of(bridge: Footbridge, outcomes: tuple[Outcome, ...]) -> tuple[str, ...]:
@@ -46,6 +47,16 @@ def _bars(outcomes: tuple[Outcome, ...]) -> Iterator[str]:
     plain = sum(bar.k_in_plane is None or bar.k_out_of_plane is None for bar in bars)
     if plain:
         yield f"The effective length factor K is 1.0 where the site gives none ({words.count(plain, 'bar')})."
+    sideways = sum(
+        held_by_frames(outcome.prepared.truss, bar) and (bar.k_out_of_plane or 0.0) < HALF_THROUGH_K
+        for outcome in outcomes
+        for bar in outcome.prepared.truss.bars
+    )
+    if sideways:
+        yield (
+            f"K out of plane is {HALF_THROUGH_K} for top chords and end posts that nothing braces overhead "
+            f"({words.count(sideways, 'bar')}; common practice, no source)."
+        )
 
 
 def _system(bridge: Footbridge) -> Iterator[str]:
