@@ -89,13 +89,23 @@ def rating_factors(basis: Basis, capacity: Array, dead: Array, live: Array) -> F
     return Factors(lowest, direction, np.where(no_load, -1, load), exceeds[-1])
 
 
-def demands(basis: Basis, dead: Array, live: Array) -> Array:
-    """The largest factored effect of dead and live load together at the upper level.
+def demands(basis: Basis, dead: Array, live: Array, live_factor: float) -> Array:
+    """The largest factored effect of dead and live load together.
+
+    Parameters
+    ----------
+    dead : (2, m) components and wearing. live : (loads, 2, m), as for `rating_factors`.
+    live_factor : of the level that is looked at.
 
     Returns
     -------
     (2, m) in tension and in compression, N; dead load alone where no live load acts that way.
     """
     size = (live * _SIGNS[None, :, None]).max(axis=0, initial=0.0)
-    total: Array = factored_dead(basis, dead) + basis.levels[-1].live * size
+    total: Array = factored_dead(basis, dead) + live_factor * size
     return total
+
+
+def acts(basis: Basis, dead: Array, live: Array) -> NDArray[np.bool_]:
+    """Whether factored loads of any level pull a bar, and whether they push it: (2, m)."""
+    return demands(basis, dead, live, max(level.live for level in basis.levels)) > 0.0

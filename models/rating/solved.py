@@ -12,7 +12,7 @@ from numpy.typing import NDArray
 from models.calculation import Array
 from models.rating.allowance import loss_allowance
 from models.rating.answer import Answer, solve
-from models.rating.factor import demands, rating_factors
+from models.rating.factor import acts, demands, rating_factors
 from models.rating.fitted import Stock
 from models.rating.prepare import PreparedTruss, Standing
 from models.rating.strength import Strength
@@ -47,7 +47,8 @@ class Figures:
 
     Parameters
     ----------
-    dead : (2, m). live : (loads, 2, m). demand : (2, m) factored, N.
+    dead : (2, m). live : (loads, 2, m). demand : (2, m) factored, upper level, N.
+    acts : (2, m) whether factored loads of any level pull it, and push it.
     lowest : (levels, m) rating factor, infinite where there is none.
     direction, load : (m,) what governs, as in `factor.Factors`. dead_exceeds : (2, m).
     allowance : (m,). without : (m,) NaN for a mechanism.
@@ -56,6 +57,7 @@ class Figures:
     dead: Array
     live: Array
     demand: Array
+    acts: NDArray[np.bool_]
     lowest: Array
     direction: NDArray[np.int64]
     load: NDArray[np.int64]
@@ -127,7 +129,7 @@ def _solve_once(task: Task, standing: Standing, flexibility: Array) -> Solved:
     answer = solve(task.prepared, standing, task.stock, flexibility)
     capacity = task.capacity
     demand, whole = np.full((2, len(task.stock.area)), np.nan), len(task.stock.area)
-    demand[:, kept] = demands(task.basis, answer.dead, answer.live)
+    demand[:, kept] = demands(task.basis, answer.dead, answer.live, task.basis.levels[-1].live)
     redundancy = np.zeros(whole)
     redundancy[kept] = answer.response.redundancy
     factors = rating_factors(task.basis, capacity[:, :, kept], answer.dead, answer.live)
@@ -144,6 +146,7 @@ def _solve_once(task: Task, standing: Standing, flexibility: Array) -> Solved:
         dead=_spread(answer.dead, kept, whole),
         live=_spread(answer.live, kept, whole),
         demand=demand,
+        acts=_spread(acts(task.basis, answer.dead, answer.live), kept, whole, 0),
         lowest=_spread(factors.lowest, kept, whole),
         direction=_spread(factors.direction, kept, whole, -1),
         load=_spread(factors.load, kept, whole, -1),

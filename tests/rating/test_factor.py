@@ -222,7 +222,7 @@ def test_factor_of_one_is_demand_at_capacity(
 ) -> None:
     """The factor is below 1 exactly where the largest factored effect exceeds the capacity."""
     effects = np.array([[pull, push]])[..., None]
-    demand: Array = demands(LRFR, np.array(dead)[:, None], effects)
+    demand: Array = demands(LRFR, np.array(dead)[:, None], effects, LRFR.levels[-1].live)
     _, operating = lowest(rate((capacity, capacity), dead, (pull, push)))
     if abs(demand.max() - capacity) > 1e-9 * capacity:
         assert (operating < 1) == (demand.max() > capacity)
@@ -231,6 +231,13 @@ def test_factor_of_one_is_demand_at_capacity(
 def test_demand_is_the_worst_load() -> None:
     """The demand takes the worst of the live loads in each direction, and dead load alone where none acts."""
     live = np.array([[[10.0], [-5.0]], [[30.0], [0.0]]])
-    found = demands(LRFR, np.array([[20.0], [0.0]]), live)
+    found = demands(LRFR, np.array([[20.0], [0.0]]), live, LRFR.levels[-1].live)
     np.testing.assert_allclose(found[:, 0], [25 + 1.35 * 30, -18 + 1.35 * 5])
-    np.testing.assert_allclose(demands(LRFR, np.array([[20.0], [0.0]]), np.zeros((0, 2, 1)))[:, 0], [25, -18])
+    np.testing.assert_allclose(demands(LRFR, np.array([[20.0], [0.0]]), np.zeros((0, 2, 1)), 1.35)[:, 0], [25, -18])
+
+
+def test_a_bar_is_pulled_if_any_level_pulls_it() -> None:
+    """A bar that only the larger live load factor pulls counts as pulled, and one that nothing pushes is not pushed."""
+    dead = np.array([[-100.0, 10.0], [0.0, 0.0]])
+    live = np.array([[[60.0, 5.0], [0.0, 0.0]]])  # 1.35 x 60 < 0.90 x 100 < 1.75 x 60
+    assert acts(LRFR, dead, live).tolist() == [[True, True], [True, False]]
