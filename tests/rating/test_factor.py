@@ -10,7 +10,7 @@ from hypothesis import given
 from hypothesis import strategies as st
 
 from models.calculation import Array
-from models.rating.factor import Factors, demands, factored_dead, rating_factors
+from models.rating.factor import Factors, acts, demands, factored_dead, rating_factors
 from models.resistance.lrfr import LRFR
 from models.resistance.protocol import DeadFactors, Level
 
