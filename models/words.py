@@ -375,7 +375,7 @@ def error_assumed(figures: Figures, error: float) -> str:
 
 def two_answers(about: str, answers: list[str], date: str) -> str:
     """Devices disagree within a visit."""
-    number = "Two" if len(answers) == 2 else str(len(answers))
+    number = {2: "Two", 3: "Three", 4: "Four"}.get(len(answers), "Several")
     return (
         f"{number} answers about {about} in the visit of {date}: {listed(answers)}. "
         "The one that gives the lower resistance counts until an entry chooses."
