@@ -9,7 +9,7 @@ from reportlab.platypus import Flowable, KeepTogether
 from inspector.report.sketch import Legend, Sketch
 from inspector.report.style import HEADING, NOTE, gap, part, text
 from models.bridge import Footbridge
-from models.elevation import in_parts
+from models.picture.elevation import in_parts
 from models.rating.result import Rating
 from models.words import Figures
 

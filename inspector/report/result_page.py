@@ -10,8 +10,8 @@ from reportlab.platypus import Flowable
 from inspector.report.findings import Told
 from inspector.report.style import BODY, FIGURE, STRONG, gap, heading, part, table, text
 from models import words
+from models.picture.views import GONE
 from models.rating.result import BarRating, Governing, Rating
-from models.views import GONE
 from models.words import Figures
 
 GOVERNING: Final = 5

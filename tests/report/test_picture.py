@@ -10,10 +10,10 @@ from reportlab.pdfbase.pdfmetrics import stringWidth
 
 from inspector.report.fonts import BOLD, REGULAR, register
 from models.bridge import Truss
-from models.elevation import elevation, in_parts
 from models.picture import PALETTE, Picture, Text, overlaps, text_width
+from models.picture.elevation import elevation, in_parts
+from models.picture.views import VIEWS
 from models.rating.result import TrussRating
-from models.views import VIEWS
 
 
 def rated(truss: Truss) -> TrussRating:

@@ -13,7 +13,7 @@ from types import MappingProxyType
 from typing import Final
 
 from models import words
-from models.picture import Pattern, Shade, Weight
+from models.picture.drawing import Pattern, Shade, Weight
 from models.rating.result import BarRating
 
 

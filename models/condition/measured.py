@@ -13,13 +13,13 @@ from dataclasses import dataclass, replace
 from typing import Final
 
 from models import words
-from models.answers import are_rivals, without_rivals
-from models.as_built import AsBuilt
 from models.bridge import Instrument
+from models.condition.answers import are_rivals, without_rivals
+from models.condition.as_built import AsBuilt
+from models.condition.profile import Measurement
 from models.finding import Finding, Level
 from models.journal import Reading
 from models.journal_order import Choice, Placed, precedes
-from models.profile import Measurement
 
 ASSUMED_ERROR: Final = 0.3e-3
 """Error of a reading whose instrument does not say, m (common practice, no source)."""

@@ -9,7 +9,7 @@ from typing import Final
 
 import numpy as np
 
-from models.picture import Boxes, Point, Text, as_boxes, box_of, meet
+from models.picture.drawing import Boxes, Point, Text, as_boxes, box_of, meet
 
 LONGEST: Final = 14
 _LAST_PLAIN: Final = 0x052F
@@ -104,12 +104,15 @@ def upright(start: Point, end: Point, depth: float, height: float, centre: Point
 
 
 def along(stretch: Stretch, name: str, figure: str, of: str) -> list[Candidate]:
-    """The ways to write a bar's name and its figure beside it."""
+    """The ways to write a bar's name and its figure beside it; the figure alone where there is no name."""
     found: list[Candidate] = []
     for fraction in _FRACTIONS:
         far = 4 * abs(fraction - 0.5)
         for side in (stretch.outward, -stretch.outward):
             other = 0.0 if side == stretch.outward else 1.0
+            if not name:
+                found.append(_alone(stretch, figure, of, fraction, side, far + other))
+                continue
             found += [
                 _in_line(stretch, name, figure, of, fraction, side, far + other),
                 _pair(stretch, name, figure, of, fraction, (side, -side), far + other + 1),
@@ -129,6 +132,11 @@ def _overhang(stretch: Stretch, fraction: float, width: float) -> float:
     """Dislike of a label that reaches beyond its bar's end."""
     room = 2 * min(fraction, 1 - fraction) * stretch.length
     return 20 * max(0.0, width - 0.95 * room) / stretch.height
+
+
+def _alone(stretch: Stretch, figure: str, of: str, fraction: float, side: int, dislike: float) -> Candidate:
+    text = Text(figure, stretch.beside(fraction, side), stretch.height, "bar figure", stretch.angle, bold=True, of=of)
+    return Candidate((text,), dislike + _overhang(stretch, fraction, text.width))
 
 
 def _in_line(

@@ -6,9 +6,9 @@ import math
 from collections.abc import Sequence
 from typing import Final
 
-from models.picture import LegendRow, Line, Pattern, Point, Shade, Text
+from models.picture.drawing import LegendRow, Line, Pattern, Point, Shade, Text
+from models.picture.views import GONE, View
 from models.rating.result import BarRating
-from models.views import GONE, View
 from models.words import Figures, significant
 
 _SIDES: Final = 12

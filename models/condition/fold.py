@@ -12,16 +12,16 @@ from dataclasses import dataclass, replace
 from typing import Literal
 
 from models import words
-from models.answers import answers, speaks_of_bar
-from models.as_built import Catalogue
 from models.bridge import Bar, Footbridge, Truss
+from models.condition.answers import answers, speaks_of_bar
+from models.condition.as_built import Catalogue
+from models.condition.measured import Place, measured
+from models.condition.profile import DOUBTFUL, ESTIMATE, NOMINAL, READING, Measurement, Profile
+from models.condition.replacement import Present, present
+from models.condition.thickness import thickness_along
 from models.finding import Finding
 from models.journal import Bow, Crack, Journal, Visit
 from models.journal_order import NOTHING_RECORDED, BarRecord, standing
-from models.measured import Place, measured
-from models.profile import DOUBTFUL, ESTIMATE, NOMINAL, READING, Measurement, Profile
-from models.replacement import Present, present
-from models.thickness import thickness_along
 
 __all__ = [
     "DOUBTFUL",

@@ -9,7 +9,7 @@ import numpy as np
 from numpy.typing import NDArray
 
 from models.bridge import Footbridge
-from models.profile import ESTIMATE, NOMINAL, Profile
+from models.condition.profile import ESTIMATE, NOMINAL, Profile
 from models.section import built
 from models.section.plate import DISC
 

@@ -5,9 +5,9 @@ from __future__ import annotations
 from dataclasses import dataclass
 
 from models import words
-from models.answers import Answer, without_rivals
-from models.as_built import AsBuilt, Catalogue
 from models.bridge import Bar
+from models.condition.answers import Answer, without_rivals
+from models.condition.as_built import AsBuilt, Catalogue
 from models.finding import Finding
 from models.journal import Replaced
 from models.journal_order import BarRecord, Placed, precedes

@@ -12,11 +12,22 @@ from dataclasses import dataclass, replace
 from typing import Final
 
 from models.bridge import Bar, Truss
-from models.labels import Stretch, along, around, place, short_name, upright
-from models.picture import Line, Picture, Point, Text, as_boxes, box_along, overlaps
+from models.picture.drawing import Line, Picture, Point, Text, as_boxes, box_along, overlaps
+from models.picture.labels import Stretch, along, around, place, short_name, upright
+from models.picture.symbols import (
+    circle,
+    cross,
+    deck_line,
+    legend,
+    pin,
+    roller,
+    scale_bar,
+    strokes,
+    support_box,
+    way_ahead,
+)
+from models.picture.views import GONE, VIEWS, View
 from models.rating.result import BarRating, TrussRating
-from models.symbols import circle, cross, deck_line, legend, pin, roller, scale_bar, strokes, support_box, way_ahead
-from models.views import GONE, VIEWS, View
 from models.words import Figures
 
 BAR_DEPTH: Final = 0.6
@@ -28,23 +39,54 @@ _STEPS_IN_PARTS: Final = 4
 _MOST_PARTS: Final = 6
 _MARGIN: Final = 4.0
 _HULL: Final = ("top chord", "bottom chord", "end post")
+_OF_BARS: Final = ("bar", "axis", "gone", "not seen")
 
 
 def elevation(
     truss: Truss, rated: TrussRating, view: str = "rating factor", level: str = "operating",
-    figures: Figures | None = None, across: float = 125.0,
+    figures: Figures | None = None, across: float = 125.0, *, bar_names: bool = True,
 ) -> Picture:  # fmt: skip
     """Draw a truss as one picture.
 
     Parameters
     ----------
-    view : a name in `models.views.VIEWS`.
+    view : a name in `models.picture.views.VIEWS`.
     level : the level of the basis whose rating factors are shown.
     across : how many text heights fit into the width that the drawing will get; letters become
         smaller only where labels would cover each other.
+    bar_names : whether bars are named beside their figure; without, letters can be larger.
+    """
+    look = _Look(VIEWS[view], level, figures or Figures(), _numbers(truss), bar_names)
+    return _clearest(truss, rated, look, across, _STEPS)
+
+
+def redrawn(
+    picture: Picture, truss: Truss, rated: TrussRating, view: str = "rating factor", level: str = "operating",
+    figures: Figures | None = None,
+) -> Picture | None:  # fmt: skip
+    """The same picture with new figures, every label in its place; None where a figure has become too long for it.
+
+    Finding places for labels takes much longer than a rating does; it is done again only where it must.
+
+    Parameters
+    ----------
+    picture : what `elevation` drew of this truss with the same view, level and figures.
     """
     look = _Look(VIEWS[view], level, figures or Figures(), _numbers(truss))
-    return _clearest(truss, rated, look, across, _STEPS)
+    rows = {bar.bar: bar for bar in rated.bars}
+    texts = tuple(
+        replace(text, text=look.view.label(rows[text.of], level)) if text.role == "bar figure" else text
+        for text in picture.texts
+    )
+    sheet = _Sheet(truss, rows, look, picture.height, {name: (x.si, y.si) for name, (x, y) in truss.joints.items()})
+    stretches = _stretches(sheet)
+    bars = [line for bar in truss.bars for line in _bar(sheet, bar, stretches[bar.id])]
+    first = next(place for place, line in enumerate(picture.lines) if line.role in _OF_BARS)
+    others = tuple(line for line in picture.lines[first:] if line.role not in _OF_BARS)
+    lines = (*picture.lines[:first], *bars, *others)
+    found = replace(picture, lines=lines, texts=texts, legend=legend(look.view, rated.bars))
+    wider = any(new.width > old.width for new, old in zip(texts, picture.texts, strict=True))
+    return None if wider and len(overlaps(found)) > len(overlaps(picture)) else found
 
 
 def in_parts(
@@ -121,6 +163,7 @@ class _Look:
     level: str
     figures: Figures
     numbers: Mapping[tuple[str, str], int]
+    bar_names: bool = True
 
     def joint(self, name: str) -> str:
         """The joint's name as drawn."""
@@ -248,7 +291,8 @@ def _labels(sheet: _Sheet, stretches: Mapping[str, Stretch], fixed: list[Text]) 
     for i in order:
         bar = sheet.truss.bars[i]
         figure = sheet.look.view.label(sheet.bars[bar.id], sheet.look.level)
-        requests.append(along(stretches[bar.id], sheet.look.bar(bar.id), figure, bar.id))
+        name = sheet.look.bar(bar.id) if sheet.look.bar_names else ""
+        requests.append(along(stretches[bar.id], name, figure, bar.id))
     return place(requests, fixed, as_boxes([*strokes_of, *stands]))
 
 

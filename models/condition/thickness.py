@@ -8,10 +8,10 @@ from typing import Final, NamedTuple
 
 import numpy as np
 
-from models.as_built import AsBuilt
+from models.condition.as_built import AsBuilt
+from models.condition.measured import Estimate, Measured, Place, Spot
+from models.condition.profile import DOUBTFUL, ESTIMATE, NOMINAL, READING, Profile
 from models.journal_order import precedes
-from models.measured import Estimate, Measured, Place, Spot
-from models.profile import DOUBTFUL, ESTIMATE, NOMINAL, READING, Profile
 
 LEAST_REACH: Final = 1e-6
 """A measurement reaches at least this part of the bar to each side, so that no extent makes it vanish."""
