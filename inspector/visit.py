@@ -17,6 +17,7 @@ from models.bridge import Footbridge
 from models.errors import InputError, Problem
 from models.journal import Entry, Journal, Visit
 from models.journal_order import standing
+from models.quantity import Quantity
 
 _VISIT_KEYS: Final = frozenset({"id", "observations"})
 _ENTRY_KEYS: Final = frozenset({"id", "device", "sequence"})
@@ -125,8 +126,27 @@ class Logbook:
         visits = self._store.journal(self.bridge.id).visits
         return next((visit.entries for visit in visits if visit.id == self.visit.id), ())
 
+    def add_to_reading(self, entry: Entry, thickness: Quantity) -> Entry:
+        """Store one more value read at the spot of an entry's single reading; returns the entry that now stands.
+
+        Each value is on the disk as soon as it is typed. The entry with all values is stored first, then the
+        one with fewer is taken back, so that nothing is lost in between; `undo` goes back the same way.
+
+        Raises
+        ------
+        InputError
+            As `log` does.
+        """
+        (reading,) = entry.readings or ()
+        more = replace(reading, thickness=(*reading.thickness, thickness))
+        stored = self.log(entry.truss, entry.bar, readings=(more,))
+        self.retract(entry.id)
+        return stored
+
     def undo(self) -> Entry:
         """Take back the last entry of this device in this visit that still stands; returns the retraction.
+
+        Where that entry holds one value more than a reading before it, that reading stands again.
 
         Raises
         ------
@@ -141,7 +161,14 @@ class Logbook:
         if not left:
             raise InputError([Problem("", "no entry of this device in this visit is left to take back")])
         last = max(left, key=lambda entry: (entry.sequence, entry.id))
+        self._let_stand_what_it_extends(last, here.entries)
         return self.log(last.truss, last.bar, retracts=last.id)
+
+    def _let_stand_what_it_extends(self, last: Entry, entries: tuple[Entry, ...]) -> None:
+        before = {entry.id: entry for entry in entries if _extends(last, entry)}
+        for entry in entries:
+            if entry.device == self.device and entry.sequence == last.sequence + 1 and entry.retracts in before:
+                self.log(last.truss, last.bar, retracts=entry.id)
 
     def retract(self, entry_id: str) -> Entry:
         """Take back an entry, this device's or another's; returns the retraction. Raises as `choose` does."""
@@ -182,3 +209,11 @@ class Logbook:
         prefix = f"visits/0/observations/{len(before)}/"
         found = visit_checks.observations(Directory(site))
         return [replace(one, path=one.path.removeprefix(prefix)) for one in found if one.path.startswith(prefix)]
+
+
+def _extends(entry: Entry, earlier: Entry) -> bool:
+    """Whether an entry is an earlier one's single reading with one value more."""
+    if not (entry.readings and earlier.readings and len(entry.readings) == len(earlier.readings) == 1):
+        return False
+    (now,), (then,) = entry.readings, earlier.readings
+    return now == replace(then, thickness=now.thickness) and now.thickness[:-1] == then.thickness

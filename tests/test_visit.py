@@ -119,6 +119,36 @@ def test_undo_takes_back_the_last_that_stands(store: Store, logbook: Logbook) ->
     assert len(logbook.entries()) == 6
 
 
+def test_values_at_one_spot_are_stored_one_by_one_and_taken_back_one_by_one(store: Store, logbook: Logbook) -> None:
+    """Each value is stored as it is typed; one entry with all of them stands, and undo leaves those before."""
+    first = logbook.log("near", "2", readings=(Reading(0.5, "bar", THIN),))
+    more = logbook.add_to_reading(first, Quantity("29 mm", 0.029))
+    logbook.add_to_reading(more, Quantity("30 mm", 0.030))
+
+    def values() -> list[list[str]]:
+        records = standing(store.journal(BRIDGE.id)).records.values()
+        entries = [placed.entry for record in records for placed in record.entries if placed.entry.readings]
+        return [[one.text for one in reading.thickness] for entry in entries for reading in entry.readings or ()]
+
+    assert values() == [["31 mm", "29 mm", "30 mm"]]
+    logbook.undo()
+    assert values() == [["31 mm", "29 mm"]]
+    logbook.undo()
+    assert values() == [["31 mm"]]
+    logbook.undo()
+    assert values() == []
+
+
+def test_a_reading_that_was_taken_back_by_hand_stays_so_after_undo(store: Store, logbook: Logbook) -> None:
+    """Undo restores nothing that the last entry does not extend."""
+    first = logbook.log("near", "2", readings=(Reading(0.5, "bar", THIN),))
+    second = logbook.log("near", "2", readings=(Reading(0.1, "bar", (*THIN, Quantity("29 mm", 0.029))),))
+    logbook.retract(first.id)
+    assert logbook.undo().retracts == second.id
+    records = standing(store.journal(BRIDGE.id)).records.values()
+    assert all(placed.entry.readings is None for record in records for placed in record.entries)
+
+
 def test_undo_leaves_other_devices_and_other_visits_alone(store: Store, logbook: Logbook) -> None:
     """Undo on one tablet never takes back what another one wrote, nor what an earlier visit says."""
     earlier = Visit("earlier", "2020-01-01", (Entry("old", "near", "1", "a", 9, note="old"),))

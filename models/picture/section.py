@@ -6,7 +6,7 @@ import math
 from collections.abc import Collection
 from typing import Final
 
-from models.picture.drawing import Line, Picture, Point, Shade, Text
+from models.picture.drawing import Line, Picture, Point, Shade, Text, Weight
 from models.section import Built, Plate
 from models.section.plate import DISC, RING
 
@@ -48,7 +48,7 @@ def section_picture(built: Built, thinned: Collection[str] = (), chosen: str | N
 
 
 def _outline(plate: Plate, least: float, shade: Shade, *, heavy: bool) -> list[Line]:
-    weight = "heavy" if heavy else "thin"
+    weight: Weight = "heavy" if heavy else "thin"
     if plate.form in (RING, DISC):
         outer = (plate.breadth + plate.thickness) / 2 if plate.form == RING else plate.thickness / 2
         rings = [Line(_around(plate, outer), "plate", weight, "solid", shade, plate.name)]
