@@ -103,7 +103,8 @@ def solve_state(task: Task, removed: frozenset[int], flexibilities: tuple[Array,
 def worse(one: Solved, other: Solved) -> Solved:
     """Of two answers, bar by bar the one with the lower rating factor at the upper level.
 
-    What a bar may still lose, and what remains without it, is the lower of both answers, whichever governs now.
+    What a bar may still lose, and what remains without it, is the lower of both answers, whichever governs now; and
+    a bar counts as pulled, or as pushed, where either answer says so.
     """
     figures = _worse(one.figures, other.figures)
     return Solved(one.standing, one.answers + other.answers, figures)
@@ -115,6 +116,7 @@ def _worse(one: Figures, other: Figures) -> Figures:
     take = (second < first) | known
     pairs = {entry.name: (getattr(one, entry.name), getattr(other, entry.name)) for entry in fields(Figures)}
     chosen = {name: np.where(take, b, a) for name, (a, b) in pairs.items()}
+    chosen["acts"] = one.acts | other.acts
     chosen["allowance"] = np.fmin(one.allowance, other.allowance)
     out = np.isnan(other.lowest[-1])
     # NaN in `without` means a mechanism, which is lower than any factor; but not of a bar that one answer left out.
