@@ -16,25 +16,12 @@ from models.bridge import Bar, Footbridge, Truss
 from models.condition.answers import answers, speaks_of_bar
 from models.condition.as_built import Catalogue
 from models.condition.measured import Place, measured
-from models.condition.profile import DOUBTFUL, ESTIMATE, NOMINAL, READING, Measurement, Profile
+from models.condition.profile import Measurement, Profile
 from models.condition.replacement import Present, present
 from models.condition.thickness import thickness_along
 from models.finding import Finding
 from models.journal import Bow, Crack, Journal, Visit
 from models.journal_order import NOTHING_RECORDED, BarRecord, standing
-
-__all__ = [
-    "DOUBTFUL",
-    "ESTIMATE",
-    "NOMINAL",
-    "READING",
-    "BarCondition",
-    "Condition",
-    "Measurement",
-    "Profile",
-    "fold",
-    "fold_all",
-]
 
 
 @dataclass(frozen=True, eq=False)
