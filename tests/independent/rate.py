@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import math
+from collections.abc import Callable
 from dataclasses import dataclass
 from typing import Any
 
@@ -17,7 +18,7 @@ JSON = dict[str, Any]
 LEVELS = {"inventory": 1.75, "operating": 1.35}
 NO_FORCE = 1e-9  # of the largest force in the truss: below it a bar has none
 SINGULAR = 1e8
-STEPS = 20
+STEPS = 10
 Candidate = tuple[float, str, str | None]
 
 
@@ -70,8 +71,8 @@ class Truss:
         units = [{joint: 1.0} for joint in truss["deck joints"]]
         self.cases = [*loads.dead(document, name, truss, weighed), *units]
         self.frame, self.base = self.framed(self.carrying)
-        self._whole: dict[tuple[str, str], float] = {}
-        self._owns: dict[tuple[str, float, bool], Resistance] = {}
+        self._flexible: dict[str, list[float]] = {}
+        self._owns: dict[tuple[str, float], Resistance] = {}
         uncertain = self.frame.self_stress > 0 and any(self.conditions[key].uncertain() for key in self.carrying)
         self.variants = ("zero", "whole") if uncertain else ("zero",)
 
@@ -90,16 +91,12 @@ class Truss:
 
     def flexibility(self, key: str, variant: str, left: float = 1.0) -> float:
         """Return the integral of dx/(E A(x)) along a bar (m/N)."""
-        if left == 1.0 and (key, variant) in self._whole:
-            return self._whole[key, variant]
         condition = self.conditions[key]
         E = si(condition.material["E"])
         total = 0.0
         for piece in condition.pieces(variant):
             thickness = {name: t * left for name, t in piece.thickness.items()}
             total += piece.length / (E * sections.properties(condition.section, thickness).area)
-        if left == 1.0:
-            self._whole[key, variant] = total
         return total
 
     def effects(self, row: np.ndarray) -> Effects:
@@ -111,14 +108,12 @@ class Truss:
         }
         return Effects(numbers[0], numbers[1], live)
 
-    def own(self, key: str, left: float = 1.0, *, gross: bool = False) -> Resistance:
-        """Return a bar's factored resistance with a share of its thickness left; `gross`: slender plates whole."""
-        if (key, left, gross) not in self._owns:
+    def own(self, key: str, left: float = 1.0) -> Resistance:
+        """Return a bar's factored resistance with a share of its thickness left."""
+        if (key, left) not in self._owns:
             built, top = self.document.get("built"), self.truss["top chord"]
-            self._owns[key, left, gross] = resistance(
-                self.bars[key], self.conditions[key], top, built, left, gross=gross
-            )
-        return self._owns[key, left, gross]
+            self._owns[key, left] = resistance(self.bars[key], self.conditions[key], top, built, left)
+        return self._owns[key, left]
 
     def factors(self, key: str) -> tuple[float, float]:
         """Return the condition factor and the system factor of a bar."""
@@ -140,8 +135,12 @@ class Truss:
         """Return one bar's forces with only `left` of its plates' thickness."""
         if self.base is None:
             raise ValueError(self.name)
-        flexible = [self.flexibility(one, variant, left if one == key else 1.0) for one in self.carrying]
-        return self.effects(self.frame.compatible(self.base, flexible)[self.carrying.index(key)])
+        if variant not in self._flexible:
+            self._flexible[variant] = [self.flexibility(one, variant) for one in self.carrying]
+        place = self.carrying.index(key)
+        flexible = list(self._flexible[variant])
+        flexible[place] = self.flexibility(key, variant, left)
+        return self.effects(self.frame.compatible(self.base, flexible)[place])
 
 
 def largest(effects: dict[str, Effects]) -> float:
@@ -164,18 +163,33 @@ def lowest(found: list[Candidate]) -> float | None:
     return min((factor for factor, *_ in found), default=None)
 
 
-def allowance(
-    truss: Truss, key: str, effects: dict[str, dict[str, Effects]], tiny: float, *, gross: bool = False
-) -> float | None:
+def crossing(above: Callable[[float], float], low: float, high: float) -> float:
+    """Return where a function falls below zero from `low` (not below) to `high` (below): Illinois false position."""
+    left, right, last = above(low), above(high), 0
+    for _ in range(200):
+        middle = (low * right - high * left) / (right - left)
+        value = above(middle)
+        side = 1 if value >= 0 else -1
+        halved = 0.5 if side == last else 1.0  # an end that stays twice pulls with half its weight
+        if side > 0:
+            low, left, right = middle, value, right * halved
+        else:
+            high, right, left = middle, value, left * halved
+        last = side
+        if abs(value) < 1e-13 or high - low < 1e-13:
+            return middle
+    raise ArithmeticError(low, high)
+
+
+def allowance(truss: Truss, key: str, effects: dict[str, dict[str, Effects]], tiny: float) -> float | None:
     """Return the share of thickness that may still go until the operating factor is 1.
 
-    The first crossing on a grid of 20 steps, then bisection, everything computed again at every step.
-    `gross` counts slender plates whole.
+    The first step of a grid that ends below 1, then the crossing in it, everything computed again at every trial.
     """
     factor = strength_factor(truss, key)
 
     def at(lost: float) -> float:
-        own = truss.own(key, 1 - lost, gross=gross)
+        own = truss.own(key, 1 - lost)
         held = truss.frame.self_stress == 0
         found = []
         for variant in truss.variants:
@@ -187,15 +201,13 @@ def allowance(
     now = at(0.0)
     if now < 1:
         return 0.0
-    grid = [0.95 * step / STEPS for step in range(STEPS + 1)]
-    high = next((lost for lost in grid if at(lost) < 1), None)
-    if high is None or now == math.inf:
-        return None
-    low = high - grid[1]
-    while high - low > 1e-12:
-        middle = (low + high) / 2
-        low, high = (middle, high) if at(middle) >= 1 else (low, middle)
-    return low
+    low = 0.0
+    for step in range(1, STEPS + 1):
+        high = 0.95 * step / STEPS
+        if at(high) < 1:
+            return None if now == math.inf else crossing(lambda lost: min(at(lost), 10.0) - 1, low, high)
+        low = high
+    return None
 
 
 def without(truss: Truss, key: str, tiny: float) -> str | float | None:
@@ -231,7 +243,6 @@ def row(truss: Truss, key: str, effects: dict[str, dict[str, Effects]], tiny: fl
     shown = min(truss.variants, key=lambda v: math.inf if lowest(operating[v]) is None else lowest(operating[v]))
     forces = effects[shown][key]
     allowed = allowance(truss, key, effects, tiny) if redundancy else None
-    slender = redundancy and truss.own(key, 0.05 if allowed is None else 1 - allowed).slender
     return {
         "truss": truss.name,
         "bar": key,
@@ -247,9 +258,7 @@ def row(truss: Truss, key: str, effects: dict[str, dict[str, Effects]], tiny: fl
         "candidates": sorted((c for v in operating.values() for c in v), key=lambda c: c[0]),
         "loss allowance": allowed,
         "without it": without(truss, key, tiny) if redundancy else None,
-        "loss allowance, slender plates whole": allowance(truss, key, effects, tiny, gross=True)
-        if slender
-        else allowed,
+        "allowance covered": truss.own(key, 0.05 if allowed is None else 1 - allowed).covered,
         "slender": own.slender,
         "largest force": tiny / NO_FORCE,
     }

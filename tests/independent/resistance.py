@@ -41,6 +41,7 @@ class Resistance:
     area: float
     measured: bool
     slender: bool
+    covered: bool = True
 
 
 def net_section(bar: JSON, section: JSON) -> float:
@@ -82,7 +83,6 @@ def _elements(section: JSON, thickness: dict[str, float], E: float, fy: float) -
 
 def effective(section: JSON, piece: Piece, E: float, fy: float, stress: float) -> tuple[float, bool]:
     """Return the share of the area that is effective at a column stress (Pa), and whether any plate is slender."""
-    gross = sections.from_plates(section, piece.thickness).area
     if section["shape"] == "round tube":
         outside = si(section["diameter"]) - si(section["thickness"]) + piece.thickness["wall"]
         ratio = outside / piece.thickness["wall"]
@@ -96,7 +96,7 @@ def effective(section: JSON, piece: Piece, E: float, fy: float, stress: float) -
         if slenderness > limit * math.sqrt(fy / stress):
             root = math.sqrt((c2 * limit / slenderness) ** 2 * fy / stress)
             lost += (width - min(width, width * (1 - c1 * root) * root)) * t
-    return 1 - lost / gross, slender
+    return (1 - lost / sections.from_plates(section, piece.thickness).area, slender) if lost else (1.0, slender)
 
 
 def column(condition: Condition, piece: Piece, lengths: tuple[float, float], fy: float) -> tuple[float, float, bool]:
@@ -119,13 +119,19 @@ def lengths(bar: JSON, top_chord: str, length: float) -> tuple[float, float]:
     return k.get("in plane", 1.0) * length, out * free
 
 
-def resistance(
-    bar: JSON, condition: Condition, top_chord: str, built: int | None, left: float = 1.0, *, gross: bool = False
-) -> Resistance:
-    """Return the factored resistance with `left` of every plate's remaining thickness.
+def covered(condition: Condition, piece: Piece, fy: float) -> bool:
+    """Tell whether local buckling is settled: a round tube below 0.45 E/Fy (E7.2), no built-up plates.
 
-    `gross` counts slender plates whole, as a program without effective widths would.
+    How the plates of a built-up section hold each other is not in the file.
     """
+    if condition.section["shape"] == "round tube":
+        mean = si(condition.section["diameter"]) - si(condition.section["thickness"])
+        return mean / piece.thickness["wall"] + 1 < 0.45 * si(condition.material["E"]) / fy
+    return condition.section["shape"] != "built up"
+
+
+def resistance(bar: JSON, condition: Condition, top_chord: str, built: int | None, left: float = 1.0) -> Resistance:
+    """Return the factored resistance with `left` of every plate's remaining thickness."""
     fy, fu = strengths(condition.material, built)
     pieces = [
         Piece(p.length, {name: t * left for name, t in p.thickness.items()}, p.measured)
@@ -140,10 +146,11 @@ def resistance(
     return Resistance(
         min(plain, torn),
         "tension yield" if plain <= torn else "tension fracture",
-        0.95 * min(strength / share if gross else strength for strength, share, _ in columns),
+        0.95 * min(strength for strength, *_ in columns),
         least,
         measured,
         any(slender for *_, slender in columns),
+        all(covered(condition, piece, fy) for piece in pieces),
     )
 
 

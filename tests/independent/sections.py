@@ -191,14 +191,16 @@ def from_plates(section: JSON, thickness: dict[str, float]) -> Properties:
 
 def properties(section: JSON, thickness: dict[str, float], turned: int = 0) -> Properties:
     """Return remaining properties; table values of the section as built are scaled by what the plates give."""
-    now, new = from_plates(section, thickness), from_plates(section, nominal(section))
+    now = from_plates(section, thickness)
     area, horizontal, vertical = now.area, now.horizontal, now.vertical
-    if "area" in section:
-        area = si(section["area"]) * now.area / new.area
-    if "I horizontal" in section:
-        horizontal = si(section["I horizontal"]) * now.horizontal / new.horizontal
-    if "I vertical" in section:
-        vertical = si(section["I vertical"]) * now.vertical / new.vertical
+    if section.keys() & {"area", "I horizontal", "I vertical"}:
+        new = from_plates(section, nominal(section))
+        if "area" in section:
+            area = si(section["area"]) * now.area / new.area
+        if "I horizontal" in section:
+            horizontal = si(section["I horizontal"]) * now.horizontal / new.horizontal
+        if "I vertical" in section:
+            vertical = si(section["I vertical"]) * now.vertical / new.vertical
     if turned == 90:
         return Properties(area, vertical, horizontal, -now.product)
     return Properties(area, horizontal, vertical, now.product)

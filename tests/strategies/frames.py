@@ -47,7 +47,7 @@ def plan(choices: Choices) -> Plan:
     places = [0]
     for _ in range(panels):
         places.append(places[-1] + (usual if even else choices.whole(2000, 3500)))
-    on_top = not overhang and panels > 3 and choices.chance(0.35)
+    on_top = not overhang and panels > 3 and choices.chance(0.55)
     return Plan(tuple(places), overhang, continuous, on_top)
 
 
