@@ -189,11 +189,18 @@ def pushed(bar: str) -> str:
     )
 
 
-def slender_plate(plates: tuple[str, ...]) -> str:
-    """Thin plates in compression."""
-    noun = "plate is" if len(plates) == 1 else "plates are"
-    what = "too slender for the whole section to count"
-    return f"The {listed(plates)} {noun} {what}; the compression figure leaves that out."
+def slender_plate(plates: tuple[str, ...], counted: float) -> str:
+    """Thin plates in compression: how much of the section counts, rounded down."""
+    verb = "is" if len(plates) == 1 else "are"
+    return f"The {listed(plates)} {verb} slender: {math.floor(100 * counted)} % of the section counts in compression."
+
+
+def tube_beyond_rule(limit: float) -> str:
+    """A round tube thinner than any published rule covers."""
+    return (
+        f"The diameter over the thickness of the tube is above {limit:.2f} E/Fy, beyond which no rule is published "
+        "(AISC 360 E7.2); the compression figure leaves out how much less of the section may count."
+    )
 
 
 def not_doubly_symmetric() -> str:

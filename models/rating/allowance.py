@@ -16,7 +16,7 @@ from models.calculation import Array, NoSheet
 from models.rating.fitted import Stock
 from models.rating.strength import Strength, member_of
 from models.resistance.protocol import Basis
-from models.section import properties
+from models.section import plates_of, properties
 
 MOST: Final = 0.95
 """No larger loss is looked at."""
@@ -92,13 +92,14 @@ def _compression(
     exponent, shed = stock.whole_bar_exponent[bars], redundancy[bars]
 
     def spare(part: Array) -> Array:
-        found = properties(stack, thickness * np.repeat(part, repeats)[:, None])
-        member = member_of(stock, owner, found, effective_lengths)
+        left = thickness * np.repeat(part, repeats)[:, None]
+        member = member_of(stock, owner, properties(stack, left), effective_lengths, plates_of(stack, left))
         resistance = np.minimum.reduceat(basis.resistances(member, NoSheet())[-1].flexural_buckling, first)
         area = part**exponent
         return factor[bars] * resistance * (area * (1 - shed) + shed) / (area * demand[bars]) - 1
 
-    # Thinner plates never raise the stress that a strut bears, so the limit lies above the one of its area alone.
+    # Thinner plates never raise the load over the area that a strut bears: neither the stress of its column, nor the
+    # part of its area that counts times that stress. So the limit lies above the one of its area alone.
     low = np.clip(_area_at_limit(demand[bars] / capacity[bars], shed) ** (1 / exponent), 1 - MOST, 1.0)
     at_low = spare(low)
     found = find_root(spare, low, np.ones(len(bars)), at_low, capacity[bars] / demand[bars] - 1)

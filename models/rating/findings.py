@@ -11,12 +11,13 @@ import numpy as np
 from models import words
 from models.bridge import Bar, Footbridge
 from models.finding import Finding, Level
+from models.rating.factor import factored_dead
 from models.rating.outcome import Outcome
 from models.rating.prepare import HALF_THROUGH_K, PreparedTruss, held_by_frames
 from models.rating.result import Reaction
-from models.rating.strength import member_of
-from models.resistance.columns import elastic_critical_load
-from models.section import centroid_shift, slender
+from models.resistance.columns import column_strength, elastic_critical_load, slenderness
+from models.resistance.effective import ROUND_COVERED, slender_parts, thin_tubes
+from models.section import centroid_shift
 from models.words import Figures
 
 _LARGE_DISPLACEMENT: Final = 1 / 50
@@ -32,7 +33,7 @@ def by_bar(bridge: Footbridge, outcome: Outcome) -> dict[str, tuple[Finding, ...
     for now in outcome.conditions:
         found[now.bar].extend(now.findings)
     figures = Figures(bridge.units or "SI")
-    for part in (_gone, _dead_alone, _pushed, _compression_leaves_out, _frames, _deck_on_chord, _slenderness):
+    for part in _PARTS:
         for number, level, text in part(outcome, figures, bridge):
             bar = outcome.prepared.truss.bars[number].id
             found[bar].append(Finding(level, text, outcome.name, bar))
@@ -67,7 +68,8 @@ def _dead_alone(outcome: Outcome, figures: Figures, bridge: Footbridge) -> _Foun
     found, capacity = outcome.solved.figures, outcome.task.capacity[-1]
     for number in np.flatnonzero(found.dead_exceeds.any(axis=0)).tolist():
         direction = int(found.direction[number])
-        excess = float(found.demand[direction, number] - capacity[direction, number])
+        alone = factored_dead(outcome.task.basis, found.dead[:, number])
+        excess = float(alone[direction] - capacity[direction, number])
         name = ("tension", "compression")[direction]
         yield number, "act now", words.dead_exceeds(_bar(outcome, number).id, name, figures.text(excess, "force"))
 
@@ -76,19 +78,16 @@ def _pushed(outcome: Outcome, figures: Figures, bridge: Footbridge) -> _Found:
     if outcome.solved is None or not any(bar.tension_only for bar in outcome.prepared.truss.bars):
         return
     for number, bar in enumerate(outcome.prepared.truss.bars):
-        if bar.tension_only and outcome.solved.figures.demand[1, number] > 0:
+        if bar.tension_only and outcome.solved.figures.acts[1, number]:
             yield number, "left out", words.pushed(bar.id)
 
 
 def _compression_leaves_out(outcome: Outcome, figures: Figures, bridge: Footbridge) -> _Found:
-    """Slender plates, sections that are not doubly symmetric, centroid shift and bow."""
-    stock, pieces = outcome.task.stock, outcome.task.strength.pieces
-    thin = slender(pieces.stack, pieces.thickness, stock.E[pieces.owner], stock.Fy[pieces.owner])
-    for number in np.unique(pieces.owner[thin.any(axis=1)]).tolist():
-        names = stock.fitted[number].built.plates
-        which = thin[pieces.owner == number].any(axis=0)[: len(names)]
-        plates = tuple(name for name, is_thin in zip(names, which, strict=True) if is_thin)
-        yield number, "left out", words.slender_plate(plates)
+    """Tubes beyond the rule, sections that are not doubly symmetric, centroid shift and bow."""
+    stock, strength = outcome.task.stock, outcome.task.strength
+    pieces = strength.pieces
+    for number in np.unique(pieces.owner[thin_tubes(strength.member, strength.plates, ROUND_COVERED)]).tolist():
+        yield number, "left out", words.tube_beyond_rule(ROUND_COVERED)
     for number, fitted in enumerate(stock.fitted):
         if not fitted.built.doubly_symmetric:
             yield number, "left out", words.not_doubly_symmetric()
@@ -122,13 +121,28 @@ def _deck_on_chord(outcome: Outcome, figures: Figures, bridge: Footbridge) -> _F
             yield number, "left out", words.loaded_between_joints(_bar(outcome, number).id)
 
 
+def _slender_plates(outcome: Outcome, figures: Figures, bridge: Footbridge) -> _Found:
+    """Bars of whose section only a part counts in compression, by the piece of which least does."""
+    strength = outcome.task.strength
+    reduced = np.flatnonzero(np.less(strength.counted, 1.0))
+    if not len(reduced):
+        return
+    member, owner, counted = strength.member, strength.pieces.owner, np.asarray(strength.counted)
+    thin = slender_parts(
+        member, strength.plates, column_strength(member.Fy * member.area, elastic_critical_load(member))
+    )
+    for number in np.unique(owner[reduced]).tolist():
+        piece = min(np.flatnonzero(owner == number).tolist(), key=counted.__getitem__)
+        pieces = outcome.task.stock.fitted[number].built.pieces
+        of_parts = [plate.name for plate in pieces for _ in plate.free]
+        names = dict.fromkeys(name for name, is_thin in zip(of_parts, thin[piece], strict=False) if is_thin)
+        yield number, "note", words.slender_plate(tuple(names) or (pieces[0].name,), float(counted[piece]))
+
+
 def _slenderness(outcome: Outcome, figures: Figures, bridge: Footbridge) -> _Found:
-    stock, strength = outcome.task.stock, outcome.task.strength
-    lengths = outcome.prepared.effective_lengths
-    member = member_of(stock, strength.pieces.owner, strength.section, lengths)
-    load = np.maximum(elastic_critical_load(member), np.finfo(float).tiny)
-    ratio = np.pi * np.sqrt(member.E * member.area / load)
-    ratio[member.area <= 0] = 0.0
+    strength = outcome.task.strength
+    member = strength.member
+    ratio = slenderness(member.E, member.area, elastic_critical_load(member))
     for number in np.unique(strength.pieces.owner[ratio > _MOST_SLENDER_MAIN]).tolist():
         bar = _bar(outcome, number)
         limit = _MOST_SLENDER.get(bar.role, _MOST_SLENDER_MAIN)
@@ -139,7 +153,12 @@ def _slenderness(outcome: Outcome, figures: Figures, bridge: Footbridge) -> _Fou
 
 def _may_be_pushed(outcome: Outcome, number: int) -> bool:
     """Whether factored loads push a bar, as far as forces tell."""
-    return outcome.solved is None or bool(outcome.solved.figures.demand[1, number] > 0)
+    return outcome.solved is None or bool(outcome.solved.figures.acts[1, number])
+
+
+_PARTS: Final[tuple[_Part, ...]] = (
+    _gone, _dead_alone, _pushed, _compression_leaves_out, _frames, _deck_on_chord, _slender_plates, _slenderness,
+)  # fmt: skip
 
 
 def of_truss(bridge: Footbridge, outcome: Outcome, reactions: tuple[Reaction, ...]) -> Iterator[Finding]:

@@ -12,7 +12,7 @@ from dataclasses import dataclass
 from models.calculation import HandCheck, Number, Sheet, Step, greatest
 from models.rating.outcome import Outcome
 from models.resistance.protocol import DeadFactors, Level, Member
-from models.section import write_section
+from models.section import write_plates, write_section
 
 
 @dataclass(frozen=True)
@@ -101,6 +101,7 @@ def _member(outcome: Outcome, number: int, piece: int, sheet: Sheet) -> Member:
         effective_length_out_of_plane=sheet.given("Lo", lengths[1], "length", "effective length out of plane, K L"),
         net_area=sheet.given("An/A", fitted.net_area, "ratio", "net over gross area"),
         shear_lag=sheet.given("U", fitted.shear_lag, "ratio", "shear lag factor"),
+        plates=write_plates(fitted.built, thickness),
     )
 
 

@@ -113,7 +113,7 @@ def _cracked_in_tension(
     cracked = [bar for bar, now in enumerate(conditions) if now.crack is not None and bar not in severed]
     if whole is None:
         return frozenset(cracked)
-    return frozenset(bar for bar in cracked if whole.figures.demand[0, bar] > 0.0)
+    return frozenset(bar for bar in cracked if whole.figures.acts[0, bar])
 
 
 def _factors(
@@ -151,7 +151,7 @@ def _flexibility(task: Task, profiles: list[Profile], evaluated: list[Profile]) 
     counts = [len(profile.thickness) for profile in profiles]
     owner = np.repeat(np.arange(len(profiles)), counts)
     if all(profile is known for profile, known in zip(profiles, evaluated, strict=True)):
-        area = task.strength.section.area
+        area = task.strength.member.area
     else:
         thickness = padded([profile.thickness for profile in profiles], pieces.thickness.shape[1])
         area = properties(stock.stack.take(owner), thickness).area

@@ -7,11 +7,11 @@ from dataclasses import dataclass
 import numpy as np
 from numpy.typing import NDArray
 
-from models.calculation import Array, NoSheet
+from models.calculation import Array, NoSheet, Number
 from models.condition import READING, BarCondition
 from models.rating.fitted import Stock
 from models.resistance.protocol import Basis, Member
-from models.section import Properties, Stack, properties
+from models.section import Plates, Properties, Stack, plates_of, properties
 
 _TIE = 1e-9
 """Pieces whose resistance differs by less than this part are one; the least known of them counts."""
@@ -64,7 +64,9 @@ def padded(thicknesses: list[Array], plates: int) -> Array:
     return np.concatenate([np.pad(one, ((0, 0), (0, plates - one.shape[1]))) for one in thicknesses])
 
 
-def member_of(stock: Stock, owner: NDArray[np.int64], found: Properties, effective_lengths: Array) -> Member:
+def member_of(
+    stock: Stock, owner: NDArray[np.int64], found: Properties, effective_lengths: Array, plates: Plates
+) -> Member:
     """Everything that decides the resistance of each piece."""
     return Member(
         E=stock.E[owner],
@@ -78,6 +80,7 @@ def member_of(stock: Stock, owner: NDArray[np.int64], found: Properties, effecti
         effective_length_out_of_plane=effective_lengths[1][owner],
         net_area=stock.net_area[owner],
         shear_lag=stock.shear_lag[owner],
+        plates=plates,
     )
 
 
@@ -91,10 +94,13 @@ class Strength:
     check : (2, m) number in `CHECKS` of what limits it at the upper level.
     piece : (2, m) number of the piece that limits it. least : (m,) piece of least area.
     area : (m,) least remaining, m^2.
+    member, plates : numbers (n,) of the pieces. counted : (n,) part of their area that counts in compression, or 1.
     """
 
     pieces: Pieces
-    section: Properties
+    member: Member
+    plates: Plates
+    counted: Number
     resistance: Array
     check: NDArray[np.int64]
     piece: NDArray[np.int64]
@@ -106,7 +112,8 @@ def strength_of(basis: Basis, stock: Stock, conditions: tuple[BarCondition, ...]
     """Evaluate every section along every bar, and keep the least of each bar."""
     pieces = pieces_of(stock, conditions)
     section = properties(pieces.stack, pieces.thickness)
-    member = member_of(stock, pieces.owner, section, effective_lengths)
+    plates = plates_of(pieces.stack, pieces.thickness)
+    member = member_of(stock, pieces.owner, section, effective_lengths, plates)
     found = basis.resistances(member, NoSheet())
     tension = np.array([np.minimum(level.tension_yield, level.tension_fracture) for level in found])
     compression = np.array([level.flexural_buckling for level in found])
@@ -117,7 +124,9 @@ def strength_of(basis: Basis, stock: Stock, conditions: tuple[BarCondition, ...]
     fractures = (upper.tension_fracture < upper.tension_yield)[governing[0]].astype(int)
     return Strength(
         pieces=pieces,
-        section=section,
+        member=member,
+        plates=plates,
+        counted=upper.counted,
         resistance=resistance,
         check=np.array([fractures, np.full_like(fractures, 2)]),
         piece=governing,

@@ -34,7 +34,7 @@ def elastic_critical_load(member: Member) -> Number:
 
 
 def column_strength(yield_load: Number, critical_load: Number) -> Number:
-    """Nominal resistance of a column without slender plates, N.
+    """Nominal resistance of a column all of whose section counts, N.
 
     Parameters
     ----------

@@ -8,6 +8,7 @@ from typing import Final
 from models.calculation import Number, Sheet, greatest
 from models.errors import InputError, Problem
 from models.resistance.columns import column_strength, elastic_critical_load
+from models.resistance.effective import BREADTHS, counted_strength
 from models.resistance.protocol import DeadFactors, FactorLine, Level, Member, Resistance
 
 PHI_YIELD: Final = 0.95
@@ -77,12 +78,15 @@ class LoadAndResistanceFactorRating:
         critical = sheet.note(
             "Pe", elastic_critical_load(member), "force", "elastic critical load", f"{_LRFD} 6.9.4.1.2 (from memory)"
         )
-        nominal = sheet.note("Pn", column_strength(full, critical), "force", "nominal compressive resistance", _COLUMN)
+        column = column_strength(full, critical)
+        counts, counted = counted_strength(member, column, sheet)
+        source = _COLUMN if counts is column else BREADTHS
+        nominal = sheet.note("Pn", counts, "force", "nominal compressive resistance", source)
         factored = PHI_COMPRESSION * nominal
         buckling = sheet.note(
             "Prc", factored, "force", "compression, flexural buckling", f"{_LRFD} 6.9.2.1 (from memory)"
         )
-        resistance = Resistance(tension_yield, tension_fracture, buckling)
+        resistance = Resistance(tension_yield, tension_fracture, buckling, counted)
         return tuple(resistance for _ in self.levels)
 
     def factor_lines(self) -> tuple[FactorLine, ...]:

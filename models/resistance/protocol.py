@@ -12,6 +12,7 @@ from typing import Protocol
 import numpy as np
 
 from models.calculation import Number, Sheet, Traced, least
+from models.section import Plates, WrittenPlates
 
 
 @dataclass(frozen=True, eq=False)
@@ -26,6 +27,7 @@ class Member:
         in-plane buckling) and the vertical axis, m^4.
     effective_length_in_plane, effective_length_out_of_plane : K times length, m.
     net_area, shear_lag : fractions of the area that count in fracture.
+    plates : what decides whether plates buckle on their own; None where none can.
     """
 
     E: Number
@@ -39,15 +41,22 @@ class Member:
     effective_length_out_of_plane: Number
     net_area: Number
     shear_lag: Number
+    plates: Plates | WrittenPlates | None = None
 
 
 @dataclass(frozen=True, eq=False)
 class Resistance:
-    """Factored resistances of a bar, N, all positive; condition and system factors are not in them."""
+    """Factored resistances of a bar, N, all positive; condition and system factors are not in them.
+
+    Parameters
+    ----------
+    counted : part of the area that counts in compression; below 1 where a plate is slender.
+    """
 
     tension_yield: Number
     tension_fracture: Number
     flexural_buckling: Number
+    counted: Number = 1.0
 
     @property
     def tension(self) -> Number:

@@ -7,7 +7,7 @@ from typing import Final
 
 from models.bridge import Section
 from models.errors import Problem
-from models.section.plate import Limit, Plate, level, upright
+from models.section.plate import OUTSTAND, Free, Plate, level, upright
 from models.section.shape import Key, Shape, length, pair, quantity
 
 LEG_LIMIT: Final = 0.45
@@ -32,7 +32,7 @@ def _angle(section: Section, heel: float, outward: int, prefix: str) -> tuple[Pl
             thickness,
             heel + outward * thickness / 2,
             vertical / 2,
-            Limit(vertical, LEG_LIMIT),
+            Free(vertical, LEG_LIMIT, OUTSTAND),
         ),
         level(
             f"{prefix}horizontal leg",
@@ -40,7 +40,7 @@ def _angle(section: Section, heel: float, outward: int, prefix: str) -> tuple[Pl
             thickness,
             heel + outward * (thickness + flat / 2),
             thickness / 2,
-            Limit(horizontal, LEG_LIMIT),
+            Free(horizontal, LEG_LIMIT, OUTSTAND),
         ),
     )
 

@@ -2,13 +2,14 @@
 
 from __future__ import annotations
 
+from collections import Counter
 from collections.abc import Iterator
-from itertools import combinations, pairwise
+from itertools import accumulate, combinations
 from typing import Final
 
 from models.bridge import Rectangle, Section
 from models.errors import Problem
-from models.section.plate import NO_LIMIT, Limit, Plate, level, upright
+from models.section.plate import HELD, OUTSTAND, Free, Imperfection, Plate, level, upright
 from models.section.shape import Key, Shape, rectangles
 
 OUTSTAND_LIMIT: Final = 0.45
@@ -33,25 +34,28 @@ def _cut(section: Section) -> tuple[Plate, ...]:
 def _plate(name: str, own: Rectangle, others: list[Rectangle]) -> Plate:
     width, height, x, y = own.width.si, own.height.si, own.x.si, own.y.si
     if width > height:
-        return level(name, width, height, x, y, _limit(own, others, across=0))
-    return upright(name, height, width, x, y, _limit(own, others, across=1))
+        return level(name, width, height, x, y, *_free(own, others, across=0))
+    return upright(name, height, width, x, y, *_free(own, others, across=1))
 
 
-def _limit(own: Rectangle, others: list[Rectangle], across: int) -> Limit:
+def _free(own: Rectangle, others: list[Rectangle], across: int) -> tuple[Free, ...]:
     """From where the other plates touch this one along its breadth; none where nothing holds it."""
     start, end = _extent(own)[across]
     touching = [_extent(other)[across] for other in others if _gap(own, other) <= _TOUCH]
     if not touching:
-        return NO_LIMIT
+        return ()
     held = sorted((max(low, start), min(high, end)) for low, high in touching)
-    outstand = max(held[0][0] - start, end - max(high for _, high in held), 0.0)
-    reached, inner = held[0][1], 0.0
-    for _, following in pairwise(held):
-        inner = max(inner, following[0] - reached)
-        reached = max(reached, following[1])
-    return max(
-        Limit(outstand, OUTSTAND_LIMIT), Limit(inner, HELD_LIMIT), key=lambda limit: limit.breadth / limit.coefficient
-    )
+    reached = list(accumulate((high for _, high in held), max))
+    inner = [following[0] - so_far for so_far, following in zip(reached[:-1], held[1:], strict=True)]
+    outer = [held[0][0] - start, end - reached[-1]]
+    return (*_alike(outer, OUTSTAND_LIMIT, OUTSTAND), *_alike(inner, HELD_LIMIT, HELD))
+
+
+def _alike(breadths: list[float], limit: float, imperfection: Imperfection) -> Iterator[Free]:
+    """Parts of the same breadth as one; places that touch leave none."""
+    counts = Counter(round(breadth, 9) for breadth in breadths if breadth > _TOUCH)
+    for breadth, count in counts.items():
+        yield Free(breadth, limit, imperfection, count)
 
 
 def _extent(rectangle: Rectangle) -> tuple[tuple[float, float], tuple[float, float]]:

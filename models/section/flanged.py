@@ -7,7 +7,7 @@ from typing import Final
 
 from models.bridge import Section
 from models.errors import Problem
-from models.section.plate import Limit, Plate, level, upright
+from models.section.plate import HELD, OUTSTAND, Free, Plate, level, upright
 from models.section.shape import Key, Option, Shape, length, quantity
 
 FLANGE_LIMIT: Final = 0.56
@@ -29,29 +29,30 @@ _KEYS: Final = (
 _ROLLED: Final = Option("rolled", (), default=False, about="rolled in one piece, rather than welded of plates")
 
 
-def _two_flanges(section: Section, web_x: float, flange_x: float, flange_limit: Limit) -> tuple[Plate, ...]:
+def _two_flanges(section: Section, web_x: float, flange_x: float, free: Free) -> tuple[Plate, ...]:
     """The origin lies at half depth."""
     depth, width = length(section, "depth"), length(section, "flange width")
     web, flange = length(section, "web thickness"), length(section, "flange thickness")
     clear = depth - 2 * flange
     arm = (depth - flange) / 2
     return (
-        upright("web", clear, web, web_x, 0.0, Limit(clear, WEB_LIMIT)),
-        level("top flange", width, flange, flange_x, arm, flange_limit),
-        level("bottom flange", width, flange, flange_x, -arm, flange_limit),
+        upright("web", clear, web, web_x, 0.0, Free(clear, WEB_LIMIT, HELD)),
+        level("top flange", width, flange, flange_x, arm, free),
+        level("bottom flange", width, flange, flange_x, -arm, free),
     )
 
 
 def _channel(section: Section) -> tuple[Plate, ...]:
     """The back of the web at x = 0, the flanges to the right."""
     width = length(section, "flange width")
-    return _two_flanges(section, length(section, "web thickness") / 2, width / 2, Limit(width, FLANGE_LIMIT))
+    free = Free(width, FLANGE_LIMIT, OUTSTAND)
+    return _two_flanges(section, length(section, "web thickness") / 2, width / 2, free)
 
 
 def _i_section(section: Section) -> tuple[Plate, ...]:
     half = length(section, "flange width") / 2
-    limit = Limit(half, FLANGE_LIMIT) if section.rolled else Limit(half, WELDED_FLANGE_LIMIT, web="web")
-    return _two_flanges(section, 0.0, 0.0, limit)
+    limit, web = (FLANGE_LIMIT, None) if section.rolled else (WELDED_FLANGE_LIMIT, "web")
+    return _two_flanges(section, 0.0, 0.0, Free(half, limit, OUTSTAND, count=2, web=web))
 
 
 def _tee(section: Section) -> tuple[Plate, ...]:
@@ -59,8 +60,8 @@ def _tee(section: Section) -> tuple[Plate, ...]:
     depth, width = length(section, "depth"), length(section, "flange width")
     web, flange = length(section, "web thickness"), length(section, "flange thickness")
     return (
-        level("flange", width, flange, 0.0, depth - flange / 2, Limit(width / 2, FLANGE_LIMIT)),
-        upright("web", depth - flange, web, 0.0, (depth - flange) / 2, Limit(depth, STEM_LIMIT)),
+        level("flange", width, flange, 0.0, depth - flange / 2, Free(width / 2, FLANGE_LIMIT, OUTSTAND, count=2)),
+        upright("web", depth - flange, web, 0.0, (depth - flange) / 2, Free(depth, STEM_LIMIT, OUTSTAND)),
     )
 
 

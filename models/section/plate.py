@@ -9,7 +9,7 @@ from __future__ import annotations
 
 import math
 from dataclasses import dataclass, replace
-from typing import Any, Final
+from typing import Any, Final, NamedTuple
 
 import numpy as np
 
@@ -44,24 +44,38 @@ DISC: Final = Form(0.0, math.pi / 4, math.inf, 16.0, math.inf, 16.0)
 _TURNED: Final = {LEVEL: UPRIGHT, UPRIGHT: LEVEL, RING: RING, DISC: DISC}
 
 
+class Imperfection(NamedTuple):
+    """The two numbers by which a slender plate's own imperfections lower its effective breadth."""
+
+    c1: float
+    c2: float
+
+
+HELD: Final = Imperfection(0.18, 1.31)
+"""Plates held along both edges, other than walls of rectangular tubes: AISC 360-22 Table E7.1 (read)."""
+TUBE_WALL: Final = Imperfection(0.20, 1.38)
+"""Walls of square and rectangular tubes: the same table."""
+OUTSTAND: Final = Imperfection(0.22, 1.49)
+"""All other plates: the same table."""
+
+
 @dataclass(frozen=True, slots=True)
-class Limit:
-    """The greatest breadth over thickness at which a plate still reaches yield in axial compression.
+class Free:
+    """A part of a plate that may buckle on its own, beside the line or between the lines along which it is held.
 
     Parameters
     ----------
-    breadth : the free breadth that counts, m; 0 where no limit applies.
-    coefficient : the limit is coefficient * sqrt(E/Fy), or coefficient * E/Fy where ``ring``.
+    breadth : over which it is free, m; its ratio to the thickness is its slenderness.
+    limit : the greatest slenderness at which it still reaches yield is limit * sqrt(E/Fy).
+    count : how many such parts the plate has.
     web : name of the web whose own slenderness lowers the limit by sqrt(kc) (flanges welded to it).
     """
 
-    breadth: float = 0.0
-    coefficient: float = 1.0
-    ring: bool = False
+    breadth: float
+    limit: float
+    imperfection: Imperfection
+    count: int = 1
     web: str | None = None
-
-
-NO_LIMIT: Final = Limit()
 
 
 @dataclass(frozen=True, slots=True)
@@ -72,6 +86,7 @@ class Plate:
     ----------
     breadth, thickness : m; the mean diameter and the wall of a ring, 0 and the diameter of a disc.
     x, y : centre, m.
+    free : the parts that may buckle on their own; a ring has its own rule and none of them.
     """
 
     name: str
@@ -80,7 +95,7 @@ class Plate:
     thickness: float
     x: float
     y: float
-    limit: Limit = NO_LIMIT
+    free: tuple[Free, ...] = ()
 
     @property
     def width(self) -> float:
@@ -178,11 +193,11 @@ def plate_inertia(area: Number, fixed: Number, share: Number, thickness: Number,
     return area * (fixed + share * thickness**2 + distance**2)
 
 
-def level(name: str, breadth: float, thickness: float, x: float, y: float, limit: Limit = NO_LIMIT) -> Plate:
+def level(name: str, breadth: float, thickness: float, x: float, y: float, *free: Free) -> Plate:
     """A rectangle that lies: breadth horizontal, thickness vertical; all in m."""
-    return Plate(name, LEVEL, breadth, thickness, x, y, limit)
+    return Plate(name, LEVEL, breadth, thickness, x, y, free)
 
 
-def upright(name: str, breadth: float, thickness: float, x: float, y: float, limit: Limit = NO_LIMIT) -> Plate:
+def upright(name: str, breadth: float, thickness: float, x: float, y: float, *free: Free) -> Plate:
     """A rectangle that stands: breadth vertical, thickness horizontal; all in m."""
-    return Plate(name, UPRIGHT, breadth, thickness, x, y, limit)
+    return Plate(name, UPRIGHT, breadth, thickness, x, y, free)

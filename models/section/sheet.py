@@ -18,6 +18,7 @@ from models.section.plate import (
     LEVEL,
     RING,
     UPRIGHT,
+    Free,
     Plate,
     Rows,
     centroid,
@@ -25,6 +26,7 @@ from models.section.plate import (
     plate_area,
     plate_inertia,
 )
+from models.section.slenderness import Ring, Strip, WrittenPlates, flange_factor
 from models.section.values import Properties, Tables, ruled
 
 _NEGLIGIBLE: Final = 1e-9
@@ -96,6 +98,43 @@ def write_section(built: Built, thickness: Array, sheet: Sheet) -> Properties:
     if abs(product.value) > _NEGLIGIBLE * float(plain.inertia_horizontal + plain.inertia_vertical):
         plain = replace(plain, inertia_product=sheet.note("Ihv", product, "inertia", "product of inertia"))
     return _under_tables(plain, built.tables, sheet)
+
+
+def write_plates(built: Built, thickness: Array) -> WrittenPlates:
+    """The free parts of a section in the symbols of `write_section`; nothing is written until one is slender.
+
+    Parameters
+    ----------
+    thickness : (P,) remaining, m.
+    """
+    left = [_symbol("t", number, float(one)) for number, one in enumerate(thickness, 1)]
+    breadths = [_symbol("b", number, plate.breadth) for number, plate in enumerate(built.pieces, 1)]
+    groups: dict[tuple[Free, float, float], list[int]] = {}
+    for place, plate in enumerate(built.pieces):
+        for free in plate.free:
+            groups.setdefault((free, min(free.breadth, plate.breadth), left[place].value), []).append(place)
+    strips = []
+    for (free, _, _), places in groups.items():
+        first, several = places[0], len(built.pieces[places[0]].free) > 1
+        web = built.plates.index(free.web) if free.web else None
+        strips.append(
+            Strip(
+                free=breadths[first] if free.breadth == breadths[first].value else free.breadth,
+                breadth=breadths[first] if free.breadth >= breadths[first].value else free.breadth,
+                thickness=left[first],
+                limit=free.limit,
+                c1=free.imperfection.c1,
+                c2=free.imperfection.c2,
+                count=free.count * len(places),
+                kc=None if web is None else flange_factor(breadths[web], left[web]),
+                plates=", ".join(built.plates[place] for place in places),
+                number=f"{first + 1}{chr(ord('a') + built.pieces[first].free.index(free)) if several else ''}",
+            )
+        )
+    ring = Ring(_symbol("Dm", 1, built.pieces[0].breadth), left[0], "1") if built.pieces[0].form == RING else None
+    factor = built.tables.area
+    table = None if factor is None or factor == 1.0 else Traced(factor, "symbol", symbol="fA", kind="ratio")
+    return WrittenPlates(tuple(strips), ring, table)
 
 
 def _centroid(sheet: Sheet, symbol: str, way: str, of: tuple[Any, Any, Number]) -> tuple[Number, Any]:

@@ -11,25 +11,29 @@ from numpy.typing import NDArray
 
 from models.calculation import Array
 from models.section.nominal import Built
-from models.section.plate import Plate, Rows, centroid, coefficients, plate_area
+from models.section.plate import RING, Rows, centroid, coefficients, plate_area
 from models.section.values import Properties, Tables, from_plates, ruled
 
 
 @dataclass(frozen=True, eq=False)
-class Limits:
-    """Slenderness limits of plates, (n, P) each.
+class FreeParts:
+    """The parts of plates that may buckle on their own, Q for each section.
 
     Parameters
     ----------
-    breadth : free breadth over the limit's coefficient, m; 0 where no limit applies.
-    ring : whether the limit goes with E/Fy instead of its root.
-    web : number of the web that lowers the limit, or -1; web_depth : its breadth, m.
+    reach : (n, Q) free breadth over the coefficient of its limit, m; 0 for padding.
+    sizes : (n, Q, 6) free breadth and how much of it belongs to the plate, m; coefficient of the limit; c1, c2; count.
+    plate : (n, Q) number of each part's plate, or None where all parts are the plates in their order.
+    web : (n, Q) number of the web that lowers the limit, or -1; web_breadth : m. None where there is none.
+    ring : (n,) mean diameter of round tubes, m, 0 for other sections, or None where there is none.
     """
 
-    breadth: Array
-    ring: NDArray[np.bool_]
-    web: NDArray[np.int64]
-    web_depth: Array
+    reach: Array
+    sizes: Array
+    plate: NDArray[np.int64] | None
+    web: NDArray[np.int64] | None
+    web_breadth: Array | None
+    ring: Array | None
 
 
 @dataclass(frozen=True, eq=False)
@@ -48,7 +52,7 @@ class Stack:
     tables: Tables
     centroid_x: Array
     centroid_y: Array
-    limits: Limits
+    free: FreeParts
 
     @property
     def shape(self) -> tuple[int, int]:
@@ -65,10 +69,10 @@ class Stack:
 def stack(builts: Sequence[Built]) -> Stack:
     """Put sections side by side."""
     most = max((len(one.pieces) for one in builts), default=0)
-    columns = np.zeros((13, len(builts), most))
+    columns = np.zeros((9, len(builts), most))
     for place, one in enumerate(builts):
         for number, plate in enumerate(one.pieces):
-            columns[:, place, number] = _column(plate, one)
+            columns[:, place, number] = (*coefficients(plate.form, plate.breadth), plate.x, plate.y, plate.thickness)
     places = np.array([[one.nominal.centroid_x, one.nominal.centroid_y] for one in builts]).reshape(-1, 2)
     return Stack(
         rows=Rows(*columns[:8]),
@@ -76,7 +80,7 @@ def stack(builts: Sequence[Built]) -> Stack:
         tables=_tables(builts),
         centroid_x=places[:, 0],
         centroid_y=places[:, 1],
-        limits=Limits(columns[9], columns[10] > 0, columns[11].astype(int) - 1, columns[12]),
+        free=_free_parts(builts),
     )
 
 
@@ -103,18 +107,29 @@ def centroid_shift(stack: Stack, thickness: Array) -> Array:
     return np.where(total > 0, np.hypot(across, up), 0.0)
 
 
-def _column(plate: Plate, one: Built) -> tuple[float, ...]:
-    limit = plate.limit
-    web = one.plates.index(limit.web) if limit.web else -1
-    return (
-        *coefficients(plate.form, plate.breadth),
-        plate.x,
-        plate.y,
-        plate.thickness,
-        limit.breadth / limit.coefficient,
-        float(limit.ring),
-        web + 1.0,
-        one.pieces[web].breadth if limit.web else 0.0,
+def _free_parts(builts: Sequence[Built]) -> FreeParts:
+    parts = [[(number, free) for number, plate in enumerate(one.pieces) for free in plate.free] for one in builts]
+    shape = len(builts), max((len(each) for each in parts), default=0)
+    sizes, plate, web, breadth = np.zeros((*shape, 6)), np.zeros(shape, int), np.full(shape, -1), np.ones(shape)
+    sizes[..., 2] = 1.0
+    for place, (one, each) in enumerate(zip(builts, parts, strict=True)):
+        for column, (number, free) in enumerate(each):
+            own = min(free.breadth, one.pieces[number].breadth)
+            sizes[place, column] = free.breadth, own, free.limit, *free.imperfection, free.count
+            plate[place, column] = number
+            if free.web:
+                web[place, column] = one.plates.index(free.web)
+                breadth[place, column] = one.pieces[web[place, column]].breadth
+    in_order = all(number == column for each in parts for column, (number, _) in enumerate(each))
+    lowered = bool((web >= 0).any())
+    ring = np.array([one.pieces[0].breadth if one.pieces[0].form == RING else 0.0 for one in builts])
+    return FreeParts(
+        reach=sizes[..., 0] / sizes[..., 2],
+        sizes=sizes,
+        plate=None if in_order else plate,
+        web=web if lowered else None,
+        web_breadth=breadth if lowered else None,
+        ring=ring if ring.any() else None,
     )
 
 

@@ -7,7 +7,7 @@ from typing import Final
 
 from models.bridge import Section
 from models.errors import Problem
-from models.section.plate import RING, Limit, Plate, level, upright
+from models.section.plate import HELD, RING, TUBE_WALL, Free, Plate, level, upright
 from models.section.shape import Key, Option, Shape, length, quantity
 
 WALL_LIMIT: Final = 1.40
@@ -15,8 +15,6 @@ WALL_LIMIT: Final = 1.40
 counted is the one between sharp inner corners, which is more than the flat part."""
 WELDED_WALL_LIMIT: Final = 1.49
 """Walls of boxes welded of plates: the same table, case 8."""
-ROUND_LIMIT: Final = 0.11
-"""Diameter over thickness of round tubes, times E/Fy: the same table, case 9."""
 
 _FORMED: Final = Option("formed", ("hot", "cold", "welded"), "cold", "how the tube was made")
 
@@ -24,9 +22,9 @@ _FORMED: Final = Option("formed", ("hot", "cold", "welded"), "cold", "how the tu
 def _rectangular(section: Section) -> tuple[Plate, ...]:
     """The origin at the centre; top and bottom walls run the full width, side walls between them."""
     depth, width, wall = length(section, "depth"), length(section, "width"), length(section, "thickness")
-    coefficient = WELDED_WALL_LIMIT if section.formed == "welded" else WALL_LIMIT
-    clear, across = depth - 2 * wall, Limit(width - 2 * wall, coefficient)
-    up = Limit(clear, coefficient)
+    limit, imperfection = (WELDED_WALL_LIMIT, HELD) if section.formed == "welded" else (WALL_LIMIT, TUBE_WALL)
+    clear = depth - 2 * wall
+    across, up = Free(width - 2 * wall, limit, imperfection), Free(clear, limit, imperfection)
     arm, side = (depth - wall) / 2, (width - wall) / 2
     return (
         level("top wall", width, wall, 0.0, arm, across),
@@ -38,8 +36,7 @@ def _rectangular(section: Section) -> tuple[Plate, ...]:
 
 def _round(section: Section) -> tuple[Plate, ...]:
     diameter, wall = length(section, "diameter"), length(section, "thickness")
-    limit = Limit(diameter, ROUND_LIMIT, ring=True)
-    return (Plate("wall", RING, diameter - wall, wall, 0.0, 0.0, limit),)
+    return (Plate("wall", RING, diameter - wall, wall, 0.0, 0.0),)
 
 
 def _rectangular_too_thick(section: Section) -> Iterator[Problem]:

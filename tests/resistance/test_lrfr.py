@@ -166,7 +166,7 @@ def test_bases_are_found_by_name() -> None:
 
 
 def test_a_member_names_every_number_once() -> None:
-    """The protocol's member carries exactly the numbers that a basis may use."""
+    """The protocol's member carries exactly the numbers that a basis may use, and what can make plates slender."""
     assert {field.name for field in fields(Member)} == {
-        *GIVEN, "area", "inertia_horizontal", "inertia_vertical", "inertia_product",
+        *GIVEN, "area", "inertia_horizontal", "inertia_vertical", "inertia_product", "plates",
     }  # fmt: skip

@@ -6,10 +6,12 @@ import math
 
 import numpy as np
 import pytest
-from section.making import ALL, BOX, I_SECTION, PIPE, section
+from numpy.typing import NDArray
+from section.making import ALL, BOX, BUILT_UP, I_SECTION, PIPE, section
 
 from models.bridge import Section
-from models.section import built, slender, stack
+from models.calculation import Array
+from models.section import Stack, built, plates_of, stack
 
 E, FY = 200e9, 250e6
 ROOT = math.sqrt(E / FY)
@@ -22,6 +24,16 @@ BUILT_BOX = section(
     "built up",
     plates={"top": (220, 10, 0, 105), "bottom": (220, 10, 0, -105), "l": (8, 200, -80, 0), "r": (8, 200, 80, 0)},
 )
+
+
+def slender(stacked: Stack, thickness: Array, E: Array | float, Fy: Array | float) -> NDArray[np.bool_]:
+    """Which plates (n, P) have a part that is slender at yield."""
+    found = plates_of(stacked, thickness).slender(E, Fy)
+    whole, parts = np.zeros(stacked.shape, bool), stacked.free
+    places = np.tile(np.arange(found.shape[1]), (len(found), 1)) if parts.plate is None else parts.plate
+    for row, column in zip(*np.nonzero(found), strict=True):
+        whole[row, places[row, column]] = True
+    return whole
 
 
 @pytest.mark.parametrize(
@@ -39,7 +51,6 @@ BUILT_BOX = section(
         (BOX, "top wall", 70 / (1.40 * ROOT)),
         (BOX, "left wall", 110 / (1.40 * ROOT)),
         (WELDED_BOX, "left wall", 110 / (1.49 * ROOT)),
-        (PIPE, "wall", 114.3 / (0.11 * E / FY)),
         (BUILT_BOX, "top", 152 / (1.49 * ROOT)),
         (BUILT_BOX, "l", 200 / (1.49 * ROOT)),
     ],
@@ -101,3 +112,45 @@ def test_strengths_may_differ_from_bar_to_bar() -> None:
         False,
     ]
     assert slender(stacked, thickness, np.array([E, E]), np.array([250e6, 690e6]))[:, 2].tolist() == [False, True]
+
+
+def test_a_cover_plate_has_every_part_that_stands_out_or_spans() -> None:
+    """Both outstands of a cover and the part between the webs may buckle, each with its own limit and count."""
+    (cover,) = (plate for plate in built(BUILT_BOX).pieces if plate.name == "top")
+    found = [(round(1e3 * part.breadth, 6), part.limit, tuple(part.imperfection), part.count) for part in cover.free]
+    assert found == [(26.0, 0.45, (0.22, 1.49), 2), (152.0, 1.49, (0.18, 1.31), 1)]
+
+
+def test_imperfections_are_those_of_the_table() -> None:
+    """Walls of tubes, other plates held along both edges, and all others take their row of AISC 360-22 Table E7.1."""
+    rows = {
+        "tube": (BOX, 0, (0.20, 1.38)), "welded": (WELDED_BOX, 0, (0.18, 1.31)), "web": (I_SECTION, 0, (0.18, 1.31)),
+        "flange": (I_SECTION, 1, (0.22, 1.49)), "channel": (CHANNEL, 1, (0.22, 1.49)), "stem": (TEE, 1, (0.22, 1.49)),
+        "leg": (BACK_TO_BACK, 0, (0.22, 1.49)),
+    }  # fmt: skip
+    found = {name: tuple(built(one).pieces[place].free[0].imperfection) for name, (one, place, _) in rows.items()}
+    assert found == {name: expected for name, (*_, expected) in rows.items()}
+
+
+def test_flanges_on_both_sides_of_a_web_count_twice() -> None:
+    """I sections and tees have two outstands on a flange, channels one."""
+    assert [built(one).pieces[place].free[0].count for one, place in ((I_SECTION, 1), (TEE, 0), (CHANNEL, 1))] == [
+        2, 2, 1,
+    ]  # fmt: skip
+
+
+def test_a_corner_counts_in_one_plate() -> None:
+    """An angle's other leg is free over its whole length, but brings only what the vertical leg leaves of it."""
+    plates = plates_of(stack([built(ALL[0])]), built(ALL[0]).thickness[None])
+    strip = plates.strip((np.array([0, 0]), np.array([0, 1])))
+    assert strip.free == pytest.approx([0.12, 0.08])
+    assert strip.breadth == pytest.approx([0.12, 0.07])
+
+
+def test_round_tubes_keep_their_mean_diameter() -> None:
+    """A ring has no free parts; its mean diameter and its remaining wall decide, and stand only where there is one."""
+    plates = plates_of(stack([built(PIPE), built(BUILT_UP)]), np.array([[0.002, 0, 0, 0], [0.01, 0.008, 0.008, 0.012]]))
+    assert plates.ring is not None
+    assert plates.ring.diameter == pytest.approx([0.1093, 0.0])
+    assert plates.ring.thickness[0] == 0.002
+    assert plates_of(stack([built(BOX)]), built(BOX).thickness[None]).ring is None
