@@ -4,6 +4,7 @@ from __future__ import annotations
 
 from collections.abc import Sequence
 from dataclasses import dataclass
+from functools import cached_property
 
 import numpy as np
 from numpy.typing import NDArray
@@ -34,19 +35,19 @@ class Geometry:
     held: NDArray[np.bool_]
     deck: NDArray[np.int64]
 
-    @property
+    @cached_property
     def lengths(self) -> Array:
         """Length of each bar, (m,), m."""
         along, up = (self.coordinates[self.ends[:, 1]] - self.coordinates[self.ends[:, 0]]).T
         lengths: Array = np.hypot(along, up)
         return lengths
 
-    @property
+    @cached_property
     def degree(self) -> int:
         """M + r - 2j (Maxwell 1864): what counting alone says of the degree of redundancy."""
         return len(self.bars) + int(self.held.sum()) - 2 * len(self.joints)
 
-    @property
+    @cached_property
     def span(self) -> float:
         """Distance between the outermost supports, or of all joints where there are not two, m."""
         supported = np.unique(np.flatnonzero(self.held) // 2)

@@ -78,17 +78,22 @@ class Case:
         return lambda: np.linalg.solve(stiffness, loads)
 
     def sympy_solve(self) -> Job:
-        """The same truss, one load, by sympy's truss."""
+        """The forces that the same rating needs, by sympy's truss: a unit load at each deck joint that is free."""
         truss = self.document["trusses"]["only"]
 
         def solve() -> None:
+            for joint in truss["deck joints"]:
+                if joint not in truss["supports"]:
+                    one(joint)
+
+        def one(joint: str) -> None:
             model = SympyTruss()
             model.add_node(*[(name, *(Float(size.split()[0]) for size in at)) for name, at in truss["joints"].items()])
             model.add_member(*[(bar["id"], bar["from"], bar["to"]) for bar in truss["bars"]])
             model.apply_support(
                 *[(name, "pinned" if kind == "pin" else kind) for name, kind in truss["supports"].items()]
             )
-            model.apply_load((truss["deck joints"][1], 1, 270))
+            model.apply_load((joint, 1, 270))
             model.solve()
 
         return solve
@@ -112,9 +117,9 @@ def main() -> int:
     growth = best({"small": small.rate_again, "large": large.rate_again}, 10)
     solves = best({"small": small.dense_solve(), "large": large.dense_solve()}, 10)
     kept.append(row(f"rating of {large.bars} bars / of {small.bars} bars", growth["large"], growth["small"], 30))
-    kept.append(row(f"dense solve of {large.bars} bars, rating / solve", growth["large"], solves["large"], 25))
+    kept.append(row(f"rating of {large.bars} bars / dense solve", growth["large"], solves["large"], 25))
     sympy_time = best({"sympy": twenty.sympy_solve()}, 1)["sympy"]
-    kept.append(row("sympy's truss, one load / full rating", sympy_time, times["rating"], 1000, at_least=True))
+    kept.append(row("forces by sympy's truss / full rating", sympy_time, times["rating"], 1000, at_least=True))
     return 0 if all(kept) else 1
 
 
