@@ -12,9 +12,9 @@ from dataclasses import dataclass, replace
 from graphlib import CycleError, TopologicalSorter
 from typing import Final, NamedTuple
 
-from models import words
 from models.finding import Finding
 from models.journal import Call, Entry, Journal, Visit
+from models.words import condition as sentences
 
 
 class Placed(NamedTuple):
@@ -113,7 +113,7 @@ def standing(journal: Journal) -> Standing:
         if entry.chooses is None:
             continue
         if entry.chooses in taken or entry.chooses not in known:
-            findings.append(_note(entry, words.chooses_nothing(entry.chooses)))
+            findings.append(_note(entry, sentences.chooses_nothing(entry.chooses)))
             continue
         for place in dict.fromkeys((target.entry.truss, target.entry.bar) for target in known[entry.chooses]):
             choices[place].append(Choice(entry.chooses, one))
@@ -135,7 +135,7 @@ def _taken_back(placed: Iterable[Placed], known: Mapping[str, list[Placed]], fin
         if any(other is not one and not precedes(one, other) for other in known.get(target, ())):
             retractions[target].add(one.entry.id)
         else:
-            findings.append(_note(one.entry, words.retracts_nothing(target)))
+            findings.append(_note(one.entry, sentences.retracts_nothing(target)))
     taken: set[str] = set()
     for identity in _retractions_first(retractions):
         if any(by not in taken for by in retractions.get(identity, ())):

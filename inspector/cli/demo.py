@@ -19,6 +19,7 @@ from models import words
 from models.journal import Entry, Journal
 from models.journal_order import by_date, ordered
 from models.rating import bar_of
+from models.words import entries
 
 _STORE = "demo.sqlite"
 
@@ -100,7 +101,7 @@ def _entry_cells(entry: Entry, before: Rated, after: Rated) -> list[Text]:
     level = after.rating.upper_level
     bars = (bar_of(rated.rating, entry.truss, entry.bar).rating_factor[level] for rated in (before, after))
     lowest = (rated.rating.structure.rating_factor[level] for rated in (before, after))
-    cells = [str(entry.sequence), f"{entry.truss}/{entry.bar}", words.entry(entry), _change(*bars), _change(*lowest)]
+    cells = [str(entry.sequence), f"{entry.truss}/{entry.bar}", entries.entry(entry), _change(*bars), _change(*lowest)]
     return [Text(cell) for cell in cells]
 
 

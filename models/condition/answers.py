@@ -15,6 +15,7 @@ from models import words
 from models.finding import Finding
 from models.journal import Bow, Crack, Entry
 from models.journal_order import Choice, Placed, precedes
+from models.words import condition as sentences
 
 STATES: Final = ("good", "fair", "poor", "severe")
 """From the best to the worst."""
@@ -164,7 +165,7 @@ class _Reader:
         """Note that answers of one visit differ, if they do."""
         different = list(dict.fromkeys(text for _, text in given))
         if len(different) > 1:
-            self.findings.append(Finding("doubtful", words.two_answers(about, different, given[0][0])))
+            self.findings.append(Finding("doubtful", sentences.two_answers(about, different, given[0][0])))
 
     def crack_in_words(self, crack: Cracked) -> str:
         """A crack, by its length where that was recorded."""
@@ -185,10 +186,10 @@ class _Reader:
         bow = largest.value
         offset = abs(bow.offset.si)
         if any(one.value.offset.si and not _same_direction(one.value, bow) for one in left):
-            self.findings.append(Finding("doubtful", words.bow_both_ways(self.figures, offset)))
+            self.findings.append(Finding("doubtful", sentences.bow_both_ways(self.figures, offset)))
         over = bow.over.si if bow.over is not None and bow.over.si > 0 else length
         if offset > over / 50:
-            self.findings.append(Finding("doubtful", words.bow_very_large(self.figures, offset, over)))
+            self.findings.append(Finding("doubtful", sentences.bow_very_large(self.figures, offset, over)))
         return bow
 
     def _offset(self, bow: Bow) -> str:

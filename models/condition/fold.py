@@ -22,6 +22,7 @@ from models.condition.thickness import thickness_along
 from models.finding import Finding
 from models.journal import Bow, Crack, Journal, Visit
 from models.journal_order import NOTHING_RECORDED, BarRecord, standing
+from models.words import condition as sentences
 
 
 @dataclass(frozen=True, eq=False)
@@ -132,8 +133,8 @@ def fold_all(bridge: Footbridge, journal: Journal, previous: Condition | None = 
                 bars[place] = fold(truss, bar, bar_length(truss, bar), record, now.visits, catalogue)
     findings = list(now.findings)
     if not now.visits:
-        findings.append(Finding("assumed", words.never_visited(catalogue.unseen_loss)))
-    findings += [Finding("note", words.bar_not_there(*place)) for place in now.records if place not in bars]
+        findings.append(Finding("assumed", sentences.never_visited(catalogue.unseen_loss)))
+    findings += [Finding("note", sentences.bar_not_there(*place)) for place in now.records if place not in bars]
     return Condition(bridge, bars, now.visits, tuple(findings), now.records, catalogue)
 
 
@@ -229,7 +230,7 @@ def _never_recorded(truss: Truss, bar: Bar, visits: Sequence[Visit], catalogue: 
 
 
 def _not_seen(date: str, reason: str | None, known_from: str | None, catalogue: Catalogue) -> Finding:
-    return Finding("assumed", words.not_seen(date, reason, known_from, catalogue.unseen_loss))
+    return Finding("assumed", sentences.not_seen(date, reason, known_from, catalogue.unseen_loss))
 
 
 def _known_from(today: Present) -> str | None:

@@ -20,6 +20,7 @@ from models.condition.profile import Measurement
 from models.finding import Finding, Level
 from models.journal import Reading
 from models.journal_order import Choice, Placed, precedes
+from models.words import condition as sentences
 
 ASSUMED_ERROR: Final = 0.3e-3
 """Error of a reading whose instrument does not say, m (common practice, no source)."""
@@ -180,14 +181,14 @@ def _say(level: Level, text: str) -> Finding:
 def _on_the_bar(station: float) -> tuple[float, tuple[Finding, ...]]:
     """A station cut to the bar's nearer end, with what to say about it."""
     used = min(max(station, 0.0), 1.0)
-    return used, () if used == station else (_say("doubtful", words.station_outside(station, used)),)
+    return used, () if used == station else (_say("doubtful", sentences.station_outside(station, used)),)
 
 
 def _a_length(extent: float, place: Place) -> tuple[float | None, tuple[Finding, ...]]:
     """An extent, or None where it is no length, with what to say about it."""
     if extent > 0:
         return extent, ()
-    return None, (_say("doubtful", words.extent_not_a_length(place.figures, extent)),)
+    return None, (_say("doubtful", sentences.extent_not_a_length(place.figures, extent)),)
 
 
 def _spots(placed: Placed, place: Place, stray: list[Finding]) -> Iterable[Spot]:
@@ -195,7 +196,7 @@ def _spots(placed: Placed, place: Place, stray: list[Finding]) -> Iterable[Spot]
     together: dict[tuple[str, float], list[Reading]] = {}
     for reading in placed.entry.readings or ():
         if reading.plate not in place.built.plates:
-            stray.append(_say("doubtful", words.plate_not_there(reading.plate, place.built.section)))
+            stray.append(_say("doubtful", sentences.plate_not_there(reading.plate, place.built.section)))
         elif reading.thickness:
             together.setdefault((reading.plate, reading.station), []).append(reading)
     return [_spot(placed, place, readings) for readings in together.values()]
@@ -212,7 +213,7 @@ def _spot(placed: Placed, place: Place, readings: Sequence[Reading]) -> Spot:
     recorded = tuple(thickness.si for one in readings for thickness in one.thickness)
     values = tuple(value for value in recorded if value >= 0)
     for negative in (value for value in recorded if value < 0):
-        text = words.negative_thickness(place.figures, negative, plate, station)
+        text = sentences.negative_thickness(place.figures, negative, plate, station)
         remarks += (_say("doubtful", text),)
     return Spot(
         placed=placed,
@@ -261,11 +262,11 @@ def _judged(spot: Spot, before: Sequence[Spot], place: Place) -> Spot:
         error = ASSUMED_ERROR if spot.error is None else spot.error
         doubtful = used > last + error + SAME
         if doubtful:
-            remarks.append(_say("doubtful", words.reading_grew(place.figures, used, last, *where)))
+            remarks.append(_say("doubtful", sentences.reading_grew(place.figures, used, last, *where)))
         elif used < last - error - SAME:
-            remarks.append(_say("doubtful", words.reading_dropped(place.figures, used, last, *where)))
+            remarks.append(_say("doubtful", sentences.reading_dropped(place.figures, used, last, *where)))
         if spot.error is None:
-            remarks.append(_say("assumed", words.error_assumed(place.figures, ASSUMED_ERROR)))
+            remarks.append(_say("assumed", sentences.error_assumed(place.figures, ASSUMED_ERROR)))
         if extent is None and not doubtful:
             extent = max((one.extent for one in latest if one.extent is not None), default=None)
     return replace(spot, used=used, extent=extent, doubtful=doubtful, remarks=tuple(remarks))
@@ -279,17 +280,17 @@ def _too_thick(spot: Spot, used: float, nominal: float, place: Place) -> Spot:
     counts = min(nominal, _mean(left)) if left else nominal
     if counts < nominal:
         aside = [value for value in spot.values if value > limit]
-        text = words.values_set_aside(place.figures, aside, counts, *where)
+        text = sentences.values_set_aside(place.figures, aside, counts, *where)
     else:
-        text = words.reading_too_thick(place.figures, used, nominal, *where)
+        text = sentences.reading_too_thick(place.figures, used, nominal, *where)
     return replace(spot, used=counts, doubtful=True, remarks=(*spot.remarks, _say("doubtful", text)))
 
 
 def _thin(used: float, nominal: float, where: tuple[str, float], figures: words.Figures) -> Iterable[Finding]:
     if used == 0:
-        yield _say("note", words.hole(*where))
+        yield _say("note", sentences.hole(*where))
     elif used < VERY_THIN and used < nominal / 2:
-        yield _say("doubtful", words.reading_very_thin(figures, used, *where))
+        yield _say("doubtful", sentences.reading_very_thin(figures, used, *where))
 
 
 def _estimates(placed: Placed, place: Place) -> Iterable[Estimate]:
@@ -306,7 +307,7 @@ def _estimates(placed: Placed, place: Place) -> Iterable[Estimate]:
         extent = math.inf if extent is None else extent
     if not 0 <= entry.estimated_loss <= 1:
         loss = None
-        remarks += (_say("doubtful", words.loss_outside(entry.estimated_loss)),)
+        remarks += (_say("doubtful", sentences.loss_outside(entry.estimated_loss)),)
     yield Estimate(placed, loss, station, extent, remarks)
 
 
@@ -319,7 +320,7 @@ def _disagreements(spots: Sequence[Spot], estimates: Sequence[Estimate], place: 
         given = [spot, *rivals]
         differ = {(one.used, one.extent) for one in given if one.used is not None}
         if len(differ) > 1 and not done.intersection(map(id, given)):
-            about = words.plate_place(spot.plate, spot.station)
+            about = sentences.plate_place(spot.plate, spot.station)
             texts = [_with_extent(one, figures) for one in given if one.used is not None]
             yield from _two_answers(about, texts, spot.placed.date)
         done.update(map(id, given))
@@ -337,7 +338,7 @@ def _disagreements(spots: Sequence[Spot], estimates: Sequence[Estimate], place: 
 def _two_answers(about: str, texts: Sequence[str], date: str) -> Iterable[Finding]:
     different = list(dict.fromkeys(texts))
     if len(different) > 1:
-        yield _say("doubtful", words.two_answers(about, different, date))
+        yield _say("doubtful", sentences.two_answers(about, different, date))
 
 
 def _with_extent(spot: Spot, figures: words.Figures) -> str:

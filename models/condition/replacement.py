@@ -4,13 +4,13 @@ from __future__ import annotations
 
 from dataclasses import dataclass
 
-from models import words
 from models.bridge import Bar
 from models.condition.answers import Answer, without_rivals
 from models.condition.as_built import AsBuilt, Catalogue
 from models.finding import Finding
 from models.journal import Replaced
 from models.journal_order import BarRecord, Placed, precedes
+from models.words import condition as sentences
 
 
 @dataclass(frozen=True, eq=False)
@@ -46,7 +46,7 @@ def present(bar: Bar, record: BarRecord, catalogue: Catalogue) -> Present:
     found = {_made_of(bar, one.value): one for one in last}
     if len(found) > 1:
         texts = [f"{section}, {material}" for section, material in found]
-        text = words.two_answers("what the bar was replaced by", texts, last[0].placed.date)
+        text = sentences.two_answers("what the bar was replaced by", texts, last[0].placed.date)
         findings.append(Finding("doubtful", text))
     section, material = min(found, key=lambda made_of: _least(bar, made_of, catalogue))
     entries = tuple(one for one in record.entries if not any(precedes(one, each.placed) for each in last))
@@ -60,7 +60,7 @@ def _known(answer: Answer[Replaced], catalogue: Catalogue, findings: list[Findin
     if new.material is not None and new.material not in bridge.materials:
         missing.append(("material", new.material))
     for what, name in missing:
-        findings.append(Finding("doubtful", words.replacement_not_there(what, name, answer.placed.date)))
+        findings.append(Finding("doubtful", sentences.replacement_not_there(what, name, answer.placed.date)))
     return not missing
 
 

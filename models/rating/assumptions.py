@@ -9,6 +9,7 @@ from models.bridge import Footbridge
 from models.loading.dead import ASSUMED_CONNECTION_ALLOWANCE
 from models.rating.outcome import Outcome
 from models.rating.prepare import HALF_THROUGH_K, held_by_frames
+from models.words import rating as sentences
 
 
 def assumptions_of(bridge: Footbridge, outcomes: tuple[Outcome, ...]) -> tuple[str, ...]:
@@ -68,4 +69,4 @@ def _system(bridge: Footbridge) -> Iterator[str]:
 def _conditions(outcomes: tuple[Outcome, ...]) -> Iterator[str]:
     unstated = sum(now.state is None for outcome in outcomes for now in outcome.conditions)
     if unstated and outcomes[0].task.basis.condition_factor(None, False) is not None:
-        yield words.no_state(unstated)
+        yield sentences.no_state(unstated)

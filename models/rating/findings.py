@@ -8,7 +8,6 @@ from typing import Final
 
 import numpy as np
 
-from models import words
 from models.bridge import Bar, Footbridge
 from models.finding import Finding, Level
 from models.rating.factor import factored_dead
@@ -19,6 +18,7 @@ from models.resistance.columns import column_strength, elastic_critical_load, sl
 from models.resistance.effective import ROUND_COVERED, slender_parts, thin_tubes
 from models.section import centroid_shift
 from models.words import Figures
+from models.words import rating as sentences
 
 _LARGE_DISPLACEMENT: Final = 1 / 50
 _MOST_SLENDER: Final = {"bracing": 140}
@@ -52,14 +52,14 @@ def _gone(outcome: Outcome, figures: Figures, bridge: Footbridge) -> _Found:
     for number in sorted(outcome.severed):
         told = outcome.conditions[number].severed
         name = _bar(outcome, number).id
-        yield number, "act now", words.severed(name) if told else words.no_steel_left(name)
+        yield number, "act now", sentences.severed(name) if told else sentences.no_steel_left(name)
     for number, now in enumerate(outcome.conditions):
         if number in outcome.cracked:
-            yield number, "act now", words.cracked_out(now.bar)
+            yield number, "act now", sentences.cracked_out(now.bar)
         elif now.crack is not None and number not in outcome.severed:
-            yield number, "left out", words.cracked_in(now.bar)
+            yield number, "left out", sentences.cracked_in(now.bar)
     for number in sorted(outcome.slack):
-        yield number, "note", words.slack_out(_bar(outcome, number).id)
+        yield number, "note", sentences.slack_out(_bar(outcome, number).id)
 
 
 def _dead_alone(outcome: Outcome, figures: Figures, bridge: Footbridge) -> _Found:
@@ -71,7 +71,7 @@ def _dead_alone(outcome: Outcome, figures: Figures, bridge: Footbridge) -> _Foun
         alone = factored_dead(outcome.task.basis, found.dead[:, number])
         excess = float(alone[direction] - capacity[direction, number])
         name = ("tension", "compression")[direction]
-        yield number, "act now", words.dead_exceeds(_bar(outcome, number).id, name, figures.text(excess, "force"))
+        yield number, "act now", sentences.dead_exceeds(_bar(outcome, number).id, name, figures.text(excess, "force"))
 
 
 def _pushed(outcome: Outcome, figures: Figures, bridge: Footbridge) -> _Found:
@@ -79,7 +79,7 @@ def _pushed(outcome: Outcome, figures: Figures, bridge: Footbridge) -> _Found:
         return
     for number, bar in enumerate(outcome.prepared.truss.bars):
         if bar.tension_only and outcome.solved.figures.acts[1, number]:
-            yield number, "left out", words.pushed(bar.id)
+            yield number, "left out", sentences.pushed(bar.id)
 
 
 def _compression_leaves_out(outcome: Outcome, figures: Figures, bridge: Footbridge) -> _Found:
@@ -87,18 +87,18 @@ def _compression_leaves_out(outcome: Outcome, figures: Figures, bridge: Footbrid
     stock, strength = outcome.task.stock, outcome.task.strength
     pieces = strength.pieces
     for number in np.unique(pieces.owner[thin_tubes(strength.member, strength.plates, ROUND_COVERED)]).tolist():
-        yield number, "left out", words.tube_beyond_rule(ROUND_COVERED)
+        yield number, "left out", sentences.tube_beyond_rule(ROUND_COVERED)
     for number, fitted in enumerate(stock.fitted):
         if not fitted.built.doubly_symmetric:
-            yield number, "left out", words.not_doubly_symmetric()
+            yield number, "left out", sentences.not_doubly_symmetric()
     shift = centroid_shift(pieces.stack, pieces.thickness)
     length = outcome.prepared.geometry.lengths
     for number in np.unique(pieces.owner[shift > _NOTICEABLE_SHIFT * length[pieces.owner]]).tolist():
         largest = float(shift[pieces.owner == number].max())
-        yield number, "left out", words.centroid_shift(figures.text(largest, "size", 2))
+        yield number, "left out", sentences.centroid_shift(figures.text(largest, "size", 2))
     for number, now in enumerate(outcome.conditions):
         if now.bow is not None:
-            yield number, "left out", words.bowed(figures.text(now.bow.offset.si, "size"))
+            yield number, "left out", sentences.bowed(figures.text(now.bow.offset.si, "size"))
 
 
 def _frames(outcome: Outcome, figures: Figures, bridge: Footbridge) -> _Found:
@@ -106,9 +106,9 @@ def _frames(outcome: Outcome, figures: Figures, bridge: Footbridge) -> _Found:
         if not held_by_frames(outcome.prepared.truss, bar):
             continue
         given = bar.k_out_of_plane
-        yield number, "left out", words.half_through(max(HALF_THROUGH_K, given or 0.0))
+        yield number, "left out", sentences.half_through(max(HALF_THROUGH_K, given or 0.0))
         if given is not None and given < HALF_THROUGH_K:
-            yield number, "note", words.smaller_k(given)
+            yield number, "note", sentences.smaller_k(given)
 
 
 def _deck_on_chord(outcome: Outcome, figures: Figures, bridge: Footbridge) -> _Found:
@@ -118,7 +118,7 @@ def _deck_on_chord(outcome: Outcome, figures: Figures, bridge: Footbridge) -> _F
     panels = {frozenset(pair) for pair in zip(geometry.deck[:-1].tolist(), geometry.deck[1:].tolist(), strict=True)}
     for number, ends in enumerate(geometry.ends.tolist()):
         if frozenset(ends) in panels:
-            yield number, "left out", words.loaded_between_joints(_bar(outcome, number).id)
+            yield number, "left out", sentences.loaded_between_joints(_bar(outcome, number).id)
 
 
 def _slender_plates(outcome: Outcome, figures: Figures, bridge: Footbridge) -> _Found:
@@ -136,7 +136,7 @@ def _slender_plates(outcome: Outcome, figures: Figures, bridge: Footbridge) -> _
         pieces = outcome.task.stock.fitted[number].built.pieces
         of_parts = [plate.name for plate in pieces for _ in plate.free]
         names = dict.fromkeys(name for name, is_thin in zip(of_parts, thin[piece], strict=False) if is_thin)
-        yield number, "note", words.slender_plate(tuple(names) or (pieces[0].name,), float(counted[piece]))
+        yield number, "note", sentences.slender_plate(tuple(names) or (pieces[0].name,), float(counted[piece]))
 
 
 def _slenderness(outcome: Outcome, figures: Figures, bridge: Footbridge) -> _Found:
@@ -148,7 +148,7 @@ def _slenderness(outcome: Outcome, figures: Figures, bridge: Footbridge) -> _Fou
         limit = _MOST_SLENDER.get(bar.role, _MOST_SLENDER_MAIN)
         largest = float(ratio[strength.pieces.owner == number].max())
         if largest > limit and _may_be_pushed(outcome, number):
-            yield number, "note", words.very_slender(largest, limit)
+            yield number, "note", sentences.very_slender(largest, limit)
 
 
 def _may_be_pushed(outcome: Outcome, number: int) -> bool:
@@ -169,16 +169,16 @@ def of_truss(bridge: Footbridge, outcome: Outcome, reactions: tuple[Reaction, ..
         joints = tuple(name for name, moves in zip(geometry.joints, stability.moving, strict=True) if moves)
         bars = tuple(name for name, loose in zip(geometry.bars, stability.loose, strict=True) if loose)
         nearly = stability.verdict == "nearly a mechanism"
-        yield Finding("act now", words.mechanism(outcome.name, joints, bars, nearly=nearly), outcome.name)
+        yield Finding("act now", sentences.mechanism(outcome.name, joints, bars, nearly=nearly), outcome.name)
     for reaction in reactions:
         if reaction.least < 0:
-            text = words.uplift(reaction.joint, figures.text(reaction.least, "force"), reaction.load)
+            text = sentences.uplift(reaction.joint, figures.text(reaction.least, "force"), reaction.load)
             yield Finding("note", text, outcome.name)
     span = geometry.span
     largest = max((answer.displacement for answer in outcome.solved.answers), default=0.0) if outcome.solved else 0.0
     if largest > span * _LARGE_DISPLACEMENT:
         size = figures.text(largest, "size")
-        text = words.large_displacement(size, figures.text(span, "length"))
+        text = sentences.large_displacement(size, figures.text(span, "length"))
         yield Finding("doubtful", text, outcome.name)
     yield from _double_bars(outcome.prepared)
 
@@ -189,7 +189,7 @@ def _double_bars(prepared: PreparedTruss) -> Iterator[Finding]:
         joined[frozenset((bar.start, bar.end))].append(bar.id)
     for bars in joined.values():
         if len(bars) > 1:
-            yield Finding("note", words.double_bars(tuple(bars)), prepared.truss.name)
+            yield Finding("note", sentences.double_bars(tuple(bars)), prepared.truss.name)
 
 
 def of_bridge(bridge: Footbridge) -> Iterator[Finding]:
@@ -197,19 +197,19 @@ def of_bridge(bridge: Footbridge) -> Iterator[Finding]:
     for load in bridge.rating.live:
         if load.rule is not None:
             why = f"the pressure of `{load.name}` by rule is not computed; give a pressure, or rate by hand."
-            yield Finding("not used", words.not_used(f"rating/live/{load.name}/rule", why))
+            yield Finding("not used", sentences.not_used(f"rating/live/{load.name}/rule", why))
     if bridge.rating.imposed:
         why = "settlement, temperature and bars made short enter no figure."
-        yield Finding("not used", words.not_used("rating/imposed", why))
+        yield Finding("not used", sentences.not_used("rating/imposed", why))
     if bridge.half_through is not None:
         why = "the lateral stability of the top chord is not rated."
-        yield Finding("not used", words.not_used("half through", why))
+        yield Finding("not used", sentences.not_used("half through", why))
     if bridge.overrides:
         why = "overrides are printed in the report and change no figure."
-        yield Finding("not used", words.not_used("overrides", why))
+        yield Finding("not used", sentences.not_used("overrides", why))
     if bridge.deck.wearing is None:
         yield Finding("assumed", "The site gives no wearing course; its weight is taken as 0.")
     stitched = [bar.id for truss in bridge.trusses.values() for bar in truss.bars if bar.stitch_spacing is not None]
     if stitched:
         why = "buckling of the pieces of built-up bars between their stitches is not computed."
-        yield Finding("not used", words.not_used("stitch spacing", why))
+        yield Finding("not used", sentences.not_used("stitch spacing", why))

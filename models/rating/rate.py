@@ -21,6 +21,7 @@ from models.rating.result import BarRating, Governing, Provenance, Rating, Truss
 from models.rating.rows import check_and_load, reactions_of, rows_of
 from models.rating.solved import Solved
 from models.resistance.protocol import Basis
+from models.words import rating as sentences
 
 _TIE = 1e-9
 
@@ -127,7 +128,7 @@ def _owner_trigger(bridge: Footbridge, structure: Governing) -> list[Finding]:
     lowest = list(structure.rating_factor.values())[-1]
     if trigger is None or lowest is None or structure.bar is None or lowest >= trigger:
         return []
-    text = words.below_trigger(structure.bar, lowest, trigger)
+    text = sentences.below_trigger(structure.bar, lowest, trigger)
     return [Finding("act now", text, structure.truss, structure.bar)]
 
 

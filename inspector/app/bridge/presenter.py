@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+from models.words import entries
 from collections.abc import Callable
 from dataclasses import dataclass, field, replace
 from typing import Any
@@ -199,7 +200,7 @@ class BridgePresenter:
             if isinstance(found, Failure):
                 self._put(stored=f"NOT stored. {found.text}", trouble=True)
                 return
-            said = "Taken back" if found.retracts else f"Stored: {words.entry(found)}"
+            said = "Taken back" if found.retracts else f"Stored: {entries.entry(found)}"
             self._put(stored=f"{said} ({found.bar})", trouble=False)
             then(found)
             self._rate((found.truss, found.bar))

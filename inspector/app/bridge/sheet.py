@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+from models.words import entries
 from collections.abc import Callable, Iterable, Sequence
 from typing import Final, TypeVar
 
@@ -69,8 +70,8 @@ def sheet_of(rated: Rated, place: tuple[str, str], visit_id: str | None, before:
         loss_before=said.before(lambda entry: entry.estimated_loss, words.percent),
         section=section_picture(cut, [row.name for row in rows if row.thinned]),
         plates=rows,
-        notes=tuple(words.entry(placed.entry) for placed in said.today),
-        earlier=tuple(f"{placed.date}: {words.entry(placed.entry)}" for placed in reversed(said.earlier)),
+        notes=tuple(entries.entry(placed.entry) for placed in said.today),
+        earlier=tuple(f"{placed.date}: {entries.entry(placed.entry)}" for placed in reversed(said.earlier)),
         doubts=tuple(dict.fromkeys(one.text for one in _about_bar(rated, place) if one.level in _ASKING)),
     )
 

@@ -1,0 +1,149 @@
+"""Sentences about what a rating found."""
+
+from __future__ import annotations
+
+import math
+
+from models.words import count, factor, listed, significant
+
+
+def severed(bar: str) -> str:
+    """A bar is cut through."""
+    return f"{bar} is severed; it carries nothing and all others are solved without it."
+
+
+def no_steel_left(bar: str) -> str:
+    """No plate is left somewhere along a bar."""
+    return f"The readings on {bar} leave no steel at one place; it is treated as severed."
+
+
+def cracked_out(bar: str) -> str:
+    """A cracked bar in tension."""
+    return (
+        f"{bar} is cracked and pulled by the factored loads; it gets no credit until an engineer has assessed the "
+        "crack. The figures are those without it."
+    )
+
+
+def cracked_in(bar: str) -> str:
+    """A cracked bar that no factored load pulls."""
+    return (
+        f"{bar} is cracked; no factored load pulls it, so it stays in. What the crack does in compression is left out."
+    )
+
+
+def mechanism(truss: str, joints: tuple[str, ...], bars: tuple[str, ...], *, nearly: bool) -> str:
+    """A truss that can move."""
+    what = "is nearly a mechanism" if nearly else "is a mechanism: it has no equilibrium as a pin-jointed truss"
+    loose = f" Bars between moving and still joints: {listed(bars)}." if bars else ""
+    moving = f" {count(len(joints), 'joint moves', 'joints move')}: {listed(joints)}." if joints else ""
+    return f"Truss {truss} {what}. There are no forces and no rating factors.{moving}{loose}"
+
+
+def dead_exceeds(bar: str, direction: str, margin: str) -> str:
+    """Dead load alone is more than a bar can carry."""
+    what = f"what {bar} can carry in {direction}, by {margin}"
+    return f"The factored dead load alone exceeds {what}; its rating factor is 0."
+
+
+def below_trigger(bar: str, found: float, trigger: float) -> str:
+    """The owner's trigger is met."""
+    limit = f"the {factor(trigger)} at which the owner wants to be called"
+    return f"{bar} has a rating factor of {factor(found)}, below {limit}."
+
+
+def pushed(bar: str) -> str:
+    """A bar that cannot push is pushed."""
+    return (
+        f"{bar} can only pull, but the loads push it. It is solved as if it could push; its forces and those of its "
+        "neighbours leave out that it would go slack."
+    )
+
+
+def slender_plate(plates: tuple[str, ...], counted: float) -> str:
+    """Thin plates in compression: how much of the section counts, rounded down."""
+    verb = "is" if len(plates) == 1 else "are"
+    return f"The {listed(plates)} {verb} slender: {math.floor(100 * counted)} % of the section counts in compression."
+
+
+def tube_beyond_rule(limit: float) -> str:
+    """A round tube thinner than any published rule covers."""
+    return (
+        f"The diameter over the thickness of the tube is above {limit:.2f} E/Fy, beyond which no rule is published "
+        "(AISC 360 E7.2); the compression figure leaves out how much less of the section may count."
+    )
+
+
+def not_doubly_symmetric() -> str:
+    """Flexural-torsional buckling is not computed."""
+    return (
+        "The section is not doubly symmetric; the compression figure leaves out flexural-torsional buckling and the "
+        "eccentricity of its connection."
+    )
+
+
+def centroid_shift(shift: str) -> str:
+    """One-sided loss moves the centroid."""
+    return f"Loss on one side moves the centroid by {shift}; the compression figure leaves that eccentricity out."
+
+
+def bowed(offset: str) -> str:
+    """A recorded bow."""
+    return f"A bow of {offset} is recorded; the compression figure leaves it out."
+
+
+def half_through(k: float) -> str:
+    """A top chord that nothing braces overhead."""
+    return (
+        f"The top chord is held sideways only by its verticals and floor beams: K out of plane {significant(k)} is "
+        "assumed, and the lateral stability of the chord is not rated."
+    )
+
+
+def smaller_k(given: float) -> str:
+    """The site gives a smaller K than a half-through chord may have."""
+    what = f"K {significant(given)} out of plane"
+    return f"The site gives {what} for a top chord that nothing braces overhead; it is not used."
+
+
+def loaded_between_joints(bar: str) -> str:
+    """The deck rests on the chord."""
+    return f"The deck rests on {bar} between its joints; the bending that this gives is left out."
+
+
+def very_slender(ratio: float, limit: int) -> str:
+    """KL/r above the usual limit."""
+    return f"KL/r is {significant(ratio)}, above {limit} (AASHTO LRFD 6.9.3, from memory)."
+
+
+def uplift(joint: str, force: str, load: str | None) -> str:
+    """A support that would lift."""
+    cause = f" under {load}" if load else ""
+    return f"The least factored reaction at {joint} is {force}{cause}: the bearing would lift unless it is held down."
+
+
+def large_displacement(size: str, span: str) -> str:
+    """Small-displacement statics is out of its depth."""
+    limit = f"a fiftieth of the {span} span"
+    return f"Under dead load and a full crowd a joint moves {size}, more than {limit}; check the model."
+
+
+def not_used(key: str, why: str) -> str:
+    """A key that is read and kept, but enters no figure."""
+    return f"`{key}` is read, not used: {why}"
+
+
+def double_bars(bars: tuple[str, ...]) -> str:
+    """Several bars join the same joints."""
+    return f"{listed(bars)} join the same joints; each is solved as a bar of its own."
+
+
+def slack_out(bar: str) -> str:
+    """A bar recorded as slack."""
+    return f"{bar} is slack; the truss is rated with it and without it, and the lower figures are shown."
+
+
+def no_state(number: int) -> str:
+    """Bars without a recorded state."""
+    verb = "has" if number == 1 else "have"
+    return f"{count(number, 'bar')} {verb} no state on record and {'counts' if number == 1 else 'count'} as fair."
