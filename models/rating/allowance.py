@@ -91,18 +91,23 @@ def _compression(
     repeats = np.diff(np.append(first, len(owner)))
     exponent, shed = stock.whole_bar_exponent[bars], redundancy[bars]
 
-    def spare(part: Array) -> Array:
+    # In logarithms all that a strut bears is close to straight: it goes with the thickness while all of it counts, and
+    # with its square where plates are slender.
+    def spare(logarithm: Array) -> Array:
+        part = np.exp(logarithm)
         left = thickness * np.repeat(part, repeats)[:, None]
         member = member_of(stock, owner, properties(stack, left), effective_lengths, plates_of(stack, left))
         resistance = np.minimum.reduceat(basis.resistances(member, NoSheet())[-1].flexural_buckling, first)
         area = part**exponent
-        return factor[bars] * resistance * (area * (1 - shed) + shed) / (area * demand[bars]) - 1
+        ratio = factor[bars] * resistance * (area * (1 - shed) + shed) / (area * demand[bars])
+        return np.log(np.maximum(ratio, _PRECISION))
 
     # Thinner plates never raise the load over the area that a strut bears: neither the stress of its column, nor the
     # part of its area that counts times that stress. So the limit lies above the one of its area alone.
-    low = np.clip(_area_at_limit(demand[bars] / capacity[bars], shed) ** (1 / exponent), 1 - MOST, 1.0)
-    at_low = spare(low)
-    found = find_root(spare, low, np.ones(len(bars)), at_low, capacity[bars] / demand[bars] - 1)
+    used = demand[bars] / capacity[bars]
+    low = np.clip(_area_at_limit(used, shed) ** (1 / exponent), 1 - MOST, 1.0)
+    at_low = spare(np.log(low))
+    found = np.exp(find_root(spare, np.log(low), np.zeros(len(bars)), at_low, -np.log(used)))
     remaining[bars] = np.where(at_low < 0, found, np.where(low > 1 - MOST, low, 0.0))
     return remaining
 

@@ -83,7 +83,9 @@ def _of_many(member: Member, plates: Plates, column: Array) -> tuple[Array, Numb
     if plates.ring is not None and tubes.any():
         ring = Ring(plates.ring.diameter[tubes], plates.ring.thickness[tubes])
         effective[tubes] = area[tubes] * effective_share(ring, member.E[tubes], member.Fy[tubes], NoSheet())
-    return stress * effective, np.where(area > 0, effective, 1.0) / np.where(area > 0, area, 1.0)
+    # a bar with nothing slender keeps its figure to the last digit, whatever stands beside it
+    reduced = effective < area
+    return np.where(reduced, stress * effective, column), np.divide(effective, area, np.ones_like(area), where=reduced)
 
 
 def _of_one(member: Member, plates: WrittenPlates, column: Number, sheet: Sheet) -> tuple[Number, Number]:
