@@ -8,6 +8,7 @@ from inspector.exchange.container import Named, two_of
 from inspector.exchange.form import Boolean, Choice, Dimensioned, Form
 from inspector.exchange.record import Key, Need, Record, Tagged
 from models.bridge import Material, Rectangle, Section
+from models.material import KINDS
 from models.section.registry import SHAPES
 from models.section.shape import Key as Dimension
 from models.section.shape import Option, Shape
@@ -65,7 +66,7 @@ SECTION: Final[Form[Section]] = Tagged(
 
 MATERIAL: Final[Form[Material]] = Record(
     (
-        Key("kind", Choice(("structural steel", "wrought iron", "stainless steel")), required=True),
+        Key("kind", Choice(KINDS), required=True),
         Key("E", Dimensioned("stress", "positive"), required=True, about="modulus of elasticity"),
         Key("Fy", Dimensioned("stress", "positive"), about="yield strength; absent: by the year built, assumed"),
         Key("Fu", Dimensioned("stress", "positive"), about="tensile strength; absent: by the year built, assumed"),
