@@ -15,7 +15,7 @@ from strategies.sites import sites
 
 Labelled = tuple[dict[str, Any], frozenset[str]]
 
-EXAMPLES = 15
+EXAMPLES = 12
 ROUNDING = 1e-9
 ROUNDING_AT_A_FLAT_JOINT = 1e-5
 """A joint that rises by a millionth of a metre puts forces a million times its load into the truss: what is left of
