@@ -5,7 +5,7 @@ Every formula takes arrays or the numbers of a hand check (`models.calculation`)
 
 References
 ----------
-AISC 360-22 E7 and Table E7.1 (read; the rule of AISC 360-16); AASHTO LRFD 6.9.4.2.2 (from memory).
+AISC 360-22 E7 and Table E7.1 (read in a transcription); AASHTO LRFD 6.9.4.2.2 (from memory).
 """
 
 from __future__ import annotations

@@ -1,8 +1,8 @@
 """Columns with slender plates against worked examples that are printed.
 
-Source: AISC, Companion to the Steel Construction Manual, Design Examples, V16.0, chapter E (read): E.1E (W16x31), E.2
-and E.3 (welded I sections), E.10 (HSS12x8x1/8), E.14B (L8x4x1/2). All steps there are rounded to three digits, so
-that stresses and forces are compared to 0.6 %. E 29,000 ksi, Fy 50 ksi.
+Source: AISC, Companion to the Steel Construction Manual, Design Examples, V16.0, chapter E (read in a transcription):
+E.1E (W16x31), E.2 and E.3 (welded I sections), E.10 (HSS12x8x1/8), E.14B (L8x4x1/2). All steps there are rounded to
+three digits, so that stresses and forces are compared to 0.6 %. E 29,000 ksi, Fy 50 ksi.
 """
 
 from __future__ import annotations
