@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+from collections.abc import Collection, Sequence
 from dataclasses import dataclass
 
 import numpy as np
@@ -36,6 +37,17 @@ def factored_dead(basis: Basis, dead: Array) -> Array:
     return total
 
 
+def live_factors(basis: Basis, kinds: Sequence[Collection[str]]) -> Array:
+    """Load factor of each live load at each level, (levels, loads).
+
+    Parameters
+    ----------
+    kinds : of the loads that act together in each live load.
+    """
+    found = [[level.live_factor(of_load) for of_load in kinds] for level in basis.levels]
+    return np.array(found).reshape(len(basis.levels), len(kinds))
+
+
 @dataclass(frozen=True, eq=False)
 class Factors:
     """Rating factors of the bars of one truss. Infinite where no live load acts that way.
@@ -54,7 +66,7 @@ class Factors:
     dead_exceeds: NDArray[np.bool_]
 
 
-def rating_factors(basis: Basis, capacity: Array, dead: Array, live: Array) -> Factors:
+def rating_factors(basis: Basis, capacity: Array, dead: Array, live: Array, gamma: Array) -> Factors:
     """RF = (C - gDC DC - gDW DW) / (gLL LL), tension and compression apart, each live load by itself.
 
     Parameters
@@ -62,6 +74,7 @@ def rating_factors(basis: Basis, capacity: Array, dead: Array, live: Array) -> F
     capacity : (levels, 2, m) factored resistance times condition and system factor, N.
     dead : (2, ..., m) components and wearing. live : (loads, 2, ..., m) largest tension and largest
         compression (negative), N.
+    gamma : (levels, loads) as `live_factors` gives them.
 
     References
     ----------
@@ -72,7 +85,7 @@ def rating_factors(basis: Basis, capacity: Array, dead: Array, live: Array) -> F
     room = shaped - demand
     exceeds = room < 0
     size = live * _SIGNS.reshape(1, 2, *([1] * (live.ndim - 2)))
-    gamma = np.array([level.live for level in basis.levels]).reshape(-1, 1, *([1] * (live.ndim - 1)))
+    gamma = gamma.reshape(*gamma.shape, *([1] * (live.ndim - 1)))
     with np.errstate(divide="ignore", invalid="ignore", over="ignore"):
         factors = room[:, None] / (gamma * size[None])
     factors = np.where(size[None] > 0, factors, np.inf)
@@ -89,23 +102,28 @@ def rating_factors(basis: Basis, capacity: Array, dead: Array, live: Array) -> F
     return Factors(lowest, direction, np.where(no_load, -1, load), exceeds[-1])
 
 
-def demands(basis: Basis, dead: Array, live: Array, live_factor: float) -> Array:
+def demands(basis: Basis, dead: Array, live: Array, gamma: Array) -> Array:
     """The largest factored effect of dead and live load together.
 
     Parameters
     ----------
     dead : (2, m) components and wearing. live : (loads, 2, m), as for `rating_factors`.
-    live_factor : of the level that is looked at.
+    gamma : (loads,) live load factors of the level that is looked at.
 
     Returns
     -------
     (2, m) in tension and in compression, N; dead load alone where no live load acts that way.
     """
-    size = (live * _SIGNS[None, :, None]).max(axis=0, initial=0.0)
-    total: Array = factored_dead(basis, dead) + live_factor * size
+    size = (gamma[:, None, None] * (live * _SIGNS[None, :, None])).max(axis=0, initial=0.0)
+    total: Array = factored_dead(basis, dead) + size
     return total
 
 
-def acts(basis: Basis, dead: Array, live: Array) -> NDArray[np.bool_]:
-    """Whether factored loads of any level pull a bar, and whether they push it: (2, m)."""
-    return demands(basis, dead, live, max(level.live for level in basis.levels)) > 0.0
+def acts(basis: Basis, dead: Array, live: Array, gamma: Array) -> NDArray[np.bool_]:
+    """Whether factored loads of any level pull a bar, and whether they push it: (2, m).
+
+    Parameters
+    ----------
+    gamma : (levels, loads) as for `rating_factors`.
+    """
+    return demands(basis, dead, live, gamma.max(axis=0)) > 0.0

@@ -6,7 +6,7 @@ Each line carries its formula, its numbers, its unit and its clause, so that a r
 from __future__ import annotations
 
 import math
-from collections.abc import Iterable
+from collections.abc import Collection, Iterable
 from dataclasses import dataclass
 
 from models.calculation import HandCheck, Number, Sheet, Step, greatest
@@ -130,7 +130,10 @@ def _write_factor(outcome: Outcome, number: int, direction: int, resistance: Num
     size = max(sign * float(figures.live[load, direction, number]), 0.0)
     live = sheet.given("LL", size, "force", f"{live_name} at its worst, as {name}")
     for level in basis.levels:
-        _write_level(sheet, level, capacity, gdc * components + gdw * wearing, live, basis.rating_source)
+        gamma = _live_factor(sheet, level, outcome.prepared.kinds[live_name])
+        factor = (capacity - (gdc * components + gdw * wearing)) / (gamma * live)
+        title = f"rating factor, {level.name}"
+        sheet.note(f"RF {level.name}", greatest(factor, 0.0), "ratio", title, basis.rating_source)
     return ""
 
 
@@ -140,10 +143,9 @@ def _dead_factor(sheet: Sheet, symbol: str, factors: DeadFactors, effect: Number
     return sheet.given(symbol, factors.greatest if acts else factors.least, "ratio", what, factors.source)
 
 
-def _write_level(sheet: Sheet, level: Level, capacity: Number, dead: Number, live: Number, source: str) -> None:
-    gamma = sheet.given(f"gLL {level.name}", level.live, "ratio", f"live load factor, {level.name}", level.source)
-    factor = (capacity - dead) / (gamma * live)
-    sheet.note(f"RF {level.name}", greatest(factor, 0.0), "ratio", f"rating factor, {level.name}", source)
+def _live_factor(sheet: Sheet, level: Level, kinds: Collection[str]) -> Number:
+    title = f"live load factor, {level.name}"
+    return sheet.given(f"gLL {level.name}", level.live_factor(kinds), "ratio", title, level.source)
 
 
 def _write_capacity(outcome: Outcome, number: int, direction: int, resistance: Number, sheet: Sheet) -> Number:

@@ -9,7 +9,7 @@ from typing import Final
 import numpy as np
 from numpy.typing import NDArray
 
-from models.bridge import Bar, Footbridge, Truss
+from models.bridge import Bar, Footbridge, LiveLoad, Truss
 from models.calculation import Array
 from models.condition import BarCondition
 from models.loading.dead import ASSUMED_CONNECTION_ALLOWANCE, deck_on_joints
@@ -57,7 +57,7 @@ class PreparedTruss:
     ----------
     deck_load : (2, j) downward force of the deck on each joint, components and wearing, N.
     effective_lengths : (2, m) K times length, in and out of plane, m.
-    patterns : live loads by name; None for one that cannot be computed.
+    patterns : live loads by name; None for one that cannot be computed. kinds : of what acts in each of them.
     tributary : (d,) length of deck that each deck joint carries, m.
     """
 
@@ -68,6 +68,7 @@ class PreparedTruss:
     deck_load: Array
     effective_lengths: Array
     patterns: Mapping[str, Pattern | None]
+    kinds: Mapping[str, frozenset[str]]
     tributary: Array
     _standing: dict[frozenset[int], Standing] = field(default_factory=dict)
 
@@ -141,8 +142,18 @@ def _prepare_truss(bridge: Footbridge, truss: Truss) -> PreparedTruss:
         deck_load=np.array(deck_on_joints(bridge, truss.name, geometry)),
         effective_lengths=_effective_lengths(truss, geometry.lengths),
         patterns=patterns(bridge.rating.live, floor_of(bridge, truss.name), x),
+        kinds=_kinds(bridge.rating.live),
         tributary=np.append(panels, 0.0) / 2 + np.append(0.0, panels) / 2,
     )
+
+
+def _kinds(loads: tuple[LiveLoad, ...]) -> dict[str, frozenset[str]]:
+    """The kinds of what acts in each live load, its own and its companions'."""
+    own = {load.name: load.kind for load in loads}
+    return {
+        load.name: frozenset({load.kind, *(own[companion.load] for companion in load.companions or ())})
+        for load in loads
+    }
 
 
 def held_by_frames(truss: Truss, bar: Bar) -> bool:

@@ -11,6 +11,7 @@ from numpy.typing import NDArray
 
 from models.finding import Finding
 from models.rating.answer import Answer
+from models.rating.factor import live_factors
 from models.rating.outcome import Outcome
 from models.rating.result import BarRating, Effect, Reaction
 from models.rating.solved import Figures
@@ -215,19 +216,22 @@ def reactions_of(outcome: Outcome) -> tuple[Reaction, ...]:
     if outcome.solved is None:
         return ()
     joints = outcome.prepared.geometry.joints
-    by_answer = [_reactions(outcome.task.basis, answer, joints) for answer in outcome.solved.answers]
+    basis, kinds = outcome.task.basis, outcome.prepared.kinds
+    by_answer = [_reactions(basis, answer, kinds, joints) for answer in outcome.solved.answers]
     return tuple(min(same, key=lambda reaction: reaction.least) for same in zip(*by_answer, strict=True))
 
 
-def _reactions(basis: Basis, answer: Answer, joints: tuple[str, ...]) -> list[Reaction]:
+def _reactions(
+    basis: Basis, answer: Answer, kinds: Mapping[str, frozenset[str]], joints: tuple[str, ...]
+) -> list[Reaction]:
     relieved = basis.components.least * answer.support_dead[0] + basis.wearing.least * answer.support_dead[1]
-    gamma = max(level.live for level in basis.levels)
+    gamma = live_factors(basis, [kinds[load] for load in answer.loads]).max(axis=0)
     found = []
     for place, joint in enumerate(answer.supports.tolist()):
-        lifting = answer.support_live[:, place]
+        lifting = gamma * answer.support_live[:, place]
         load = int(np.argmin(lifting)) if len(lifting) else -1
         lifts = load >= 0 and lifting[load] < 0
-        least = float(relieved[place] + (gamma * lifting[load] if lifts else 0.0))
+        least = float(relieved[place] + (lifting[load] if lifts else 0.0))
         dead = float(answer.support_dead[:, place].sum())
         found.append(Reaction(joints[joint], dead, least, answer.loads[load] if lifts else None))
     return found

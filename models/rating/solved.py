@@ -12,7 +12,7 @@ from numpy.typing import NDArray
 from models.calculation import Array
 from models.rating.allowance import loss_allowance
 from models.rating.answer import Answer, solve
-from models.rating.factor import acts, demands, rating_factors
+from models.rating.factor import acts, demands, live_factors, rating_factors
 from models.rating.fitted import Stock
 from models.rating.prepare import PreparedTruss, Standing
 from models.rating.strength import Strength
@@ -130,11 +130,12 @@ def _solve_once(task: Task, standing: Standing, flexibility: Array) -> Solved:
     kept = standing.kept
     answer = solve(task.prepared, standing, task.stock, flexibility)
     capacity = task.capacity
+    gamma = live_factors(task.basis, [task.prepared.kinds[load] for load in answer.loads])
     demand, whole = np.full((2, len(task.stock.area)), np.nan), len(task.stock.area)
-    demand[:, kept] = demands(task.basis, answer.dead, answer.live, task.basis.levels[-1].live)
+    demand[:, kept] = demands(task.basis, answer.dead, answer.live, gamma[-1])
     redundancy = np.zeros(whole)
     redundancy[kept] = answer.response.redundancy
-    factors = rating_factors(task.basis, capacity[:, :, kept], answer.dead, answer.live)
+    factors = rating_factors(task.basis, capacity[:, :, kept], answer.dead, answer.live, gamma)
     allowance = loss_allowance(
         task.basis,
         task.stock,
@@ -148,13 +149,13 @@ def _solve_once(task: Task, standing: Standing, flexibility: Array) -> Solved:
         dead=_spread(answer.dead, kept, whole),
         live=_spread(answer.live, kept, whole),
         demand=demand,
-        acts=_spread(acts(task.basis, answer.dead, answer.live), kept, whole, 0),
+        acts=_spread(acts(task.basis, answer.dead, answer.live, gamma), kept, whole, 0),
         lowest=_spread(factors.lowest, kept, whole),
         direction=_spread(factors.direction, kept, whole, -1),
         load=_spread(factors.load, kept, whole, -1),
         dead_exceeds=_spread(factors.dead_exceeds, kept, whole, 0),
         allowance=np.where(np.isinf(_spread(factors.lowest[-1], kept, whole)), np.inf, allowance),
-        without=_spread(factors_without(task.basis, task.prepared, answer, capacity[:, :, kept]), kept, whole),
+        without=_spread(factors_without(task.basis, task.prepared, answer, capacity[:, :, kept], gamma), kept, whole),
     )
     return Solved(standing, (answer,), figures)
 

@@ -12,12 +12,12 @@ from models.resistance.protocol import Basis
 from models.statics.loss import necessary, transfer
 
 
-def factors_without(basis: Basis, prepared: PreparedTruss, answer: Answer, capacity: Array) -> Array:
+def factors_without(basis: Basis, prepared: PreparedTruss, answer: Answer, capacity: Array, gamma: Array) -> Array:
     """Lowest rating factor at the upper level of the bars that remain, for each bar lost.
 
     Parameters
     ----------
-    capacity : (levels, 2, m) of the bars that are in, N.
+    capacity : (levels, 2, m) of the bars that are in, N. gamma : (levels, loads) live load factors.
 
     Returns
     -------
@@ -35,7 +35,7 @@ def factors_without(basis: Basis, prepared: PreparedTruss, answer: Answer, capac
     ordinates[np.abs(ordinates) <= (answer.response.noise * size)[:, None, None]] = 0.0
     live = np.array([pattern.extremes(ordinates) for pattern in prepared.patterns.values() if pattern is not None])
     live = live.reshape(len(answer.loads), 2, len(lost), bars)
-    lowest = rating_factors(basis, capacity, dead, live).lowest[-1]
+    lowest = rating_factors(basis, capacity, dead, live, gamma).lowest[-1]
     lowest[np.arange(len(lost)), lost] = np.inf
     found = np.full(bars, np.nan)
     found[lost] = lowest.min(axis=1)

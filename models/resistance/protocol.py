@@ -6,6 +6,7 @@ back; it knows nothing of trusses, plates or journals.
 
 from __future__ import annotations
 
+from collections.abc import Collection
 from dataclasses import dataclass
 from typing import Protocol
 
@@ -93,11 +94,22 @@ class FactorLine:
 
 @dataclass(frozen=True, slots=True)
 class Level:
-    """A level of rating with its live load factor and where that stands."""
+    """A level of rating with its live load factors and where they stand.
+
+    Parameters
+    ----------
+    live : factor on live loads. of_kind : kinds of load that have another one, with it.
+    """
 
     name: str
     live: float
     source: str = ""
+    of_kind: tuple[tuple[str, float], ...] = ()
+
+    def live_factor(self, kinds: Collection[str]) -> float:
+        """The factor on a live load of these kinds, the greatest where several act together."""
+        own = dict(self.of_kind)
+        return max((own.get(kind, self.live) for kind in kinds), default=self.live)
 
 
 @dataclass(frozen=True, slots=True)

@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from dataclasses import dataclass
+from typing import Any
 
 import numpy as np
 import pytest
@@ -10,7 +11,7 @@ from hypothesis import given
 from hypothesis import strategies as st
 
 from models.calculation import Array
-from models.rating.factor import Factors, acts, demands, factored_dead, rating_factors
+from models.rating.factor import Factors, acts, demands, factored_dead, live_factors, rating_factors
 from models.resistance.lrfr import LRFR
 from models.resistance.protocol import DeadFactors, Level
 
@@ -34,10 +35,16 @@ UNFACTORED = Unfactored(
 )
 
 
+def gamma(live: Array, basis: Any = LRFR) -> Array:
+    """Live load factors of so many crowds."""
+    return live_factors(basis, [{"crowd"}] * len(live))
+
+
 def rate(capacity: tuple[float, float], dead: tuple[float, float], *live: tuple[float, float]) -> Factors:
     """One bar: capacity in tension and compression, dead load, largest tension and compression of each live load."""
     both = np.array([capacity, capacity])[..., None]
-    return rating_factors(LRFR, both, np.array(dead)[:, None], np.array(live).reshape(-1, 2)[..., None])
+    effects = np.array(live).reshape(-1, 2)[..., None]
+    return rating_factors(LRFR, both, np.array(dead)[:, None], effects, gamma(effects))
 
 
 def lowest(factors: Factors) -> tuple[float, float]:
@@ -87,7 +94,7 @@ def test_allowable_stress(
     capacity[:, direction, 0] = capacities
     effects = np.zeros((1, 2, 1))
     effects[0, direction, 0] = live
-    found = rating_factors(UNFACTORED, capacity, np.array([[dead], [0.0]]), effects)
+    found = rating_factors(UNFACTORED, capacity, np.array([[dead], [0.0]]), effects, gamma(effects, UNFACTORED))
     assert lowest(found) == pytest.approx(expected, abs=2e-4)
 
 
@@ -188,9 +195,9 @@ def test_many_bars_and_variants_at_once() -> None:
     capacity = rng.uniform(50, 300, (2, 2, 5))
     dead = rng.uniform(-60, 60, (2, 3, 5))
     live = np.stack([rng.uniform(0, 80, (4, 3, 5)), -rng.uniform(0, 80, (4, 3, 5))], axis=1)
-    together = rating_factors(LRFR, capacity, dead, live)
+    together = rating_factors(LRFR, capacity, dead, live, gamma(live))
     for variant in range(3):
-        alone = rating_factors(LRFR, capacity, dead[:, variant], live[:, :, variant])
+        alone = rating_factors(LRFR, capacity, dead[:, variant], live[:, :, variant], gamma(live))
         np.testing.assert_array_equal(together.lowest[:, variant], alone.lowest)
         np.testing.assert_array_equal(together.load[variant], alone.load)
         np.testing.assert_array_equal(together.direction[variant], alone.direction)
@@ -222,7 +229,7 @@ def test_factor_of_one_is_demand_at_capacity(
 ) -> None:
     """The factor is below 1 exactly where the largest factored effect exceeds the capacity."""
     effects = np.array([[pull, push]])[..., None]
-    demand: Array = demands(LRFR, np.array(dead)[:, None], effects, LRFR.levels[-1].live)
+    demand: Array = demands(LRFR, np.array(dead)[:, None], effects, gamma(effects)[-1])
     _, operating = lowest(rate((capacity, capacity), dead, (pull, push)))
     if abs(demand.max() - capacity) > 1e-9 * capacity:
         assert (operating < 1) == (demand.max() > capacity)
@@ -231,13 +238,28 @@ def test_factor_of_one_is_demand_at_capacity(
 def test_demand_is_the_worst_load() -> None:
     """The demand takes the worst of the live loads in each direction, and dead load alone where none acts."""
     live = np.array([[[10.0], [-5.0]], [[30.0], [0.0]]])
-    found = demands(LRFR, np.array([[20.0], [0.0]]), live, LRFR.levels[-1].live)
+    found = demands(LRFR, np.array([[20.0], [0.0]]), live, gamma(live)[-1])
     np.testing.assert_allclose(found[:, 0], [25 + 1.35 * 30, -18 + 1.35 * 5])
-    np.testing.assert_allclose(demands(LRFR, np.array([[20.0], [0.0]]), np.zeros((0, 2, 1)), 1.35)[:, 0], [25, -18])
+    np.testing.assert_allclose(
+        demands(LRFR, np.array([[20.0], [0.0]]), np.zeros((0, 2, 1)), np.zeros(0))[:, 0], [25, -18]
+    )
 
 
 def test_a_bar_is_pulled_if_any_level_pulls_it() -> None:
     """A bar that only the larger live load factor pulls counts as pulled, and one that nothing pushes is not pushed."""
     dead = np.array([[-100.0, 10.0], [0.0, 0.0]])
     live = np.array([[[60.0, 5.0], [0.0, 0.0]]])  # 1.35 x 60 < 0.90 x 100 < 1.75 x 60
-    assert acts(LRFR, dead, live).tolist() == [[True, True], [True, False]]
+    assert acts(LRFR, dead, live, gamma(live)).tolist() == [[True, True], [True, False]]
+
+
+def test_a_kind_of_load_may_have_its_own_factor() -> None:
+    """Loads that stand everywhere take another factor where a basis says so; of several together the greatest."""
+    level = Level("ultimate", 1.35, of_kind=(("uniform", 1.5),))
+    basis: Any = Unfactored((level,), DeadFactors(1.35, 1.0), DeadFactors(1.35, 1.0))
+    factors = live_factors(basis, [{"crowd"}, {"uniform"}, {"crowd", "uniform"}])
+    assert factors.tolist() == [[1.35, 1.5, 1.5]]
+    live = np.full((3, 2, 1), [[30.0], [-30.0]])
+    found = rating_factors(basis, np.full((1, 2, 1), 90.0), np.zeros((2, 1)), live, factors)
+    assert found.lowest[0, 0] == pytest.approx(90 / (1.5 * 30), rel=1e-12)
+    assert found.load[0] == 1
+    assert demands(basis, np.zeros((2, 1)), live, factors[-1])[:, 0] == pytest.approx([45.0, 45.0], rel=1e-12)
