@@ -65,7 +65,8 @@ def _check(outcome: Outcome, number: int) -> BarCheck:
         what = "severed" if number in outcome.severed else "cracked and pulled"
         return BarCheck(outcome.name, bar.id, tuple(sheet.steps), f"The bar is {what}: it gets no credit.")
     if outcome.solved is None:
-        return BarCheck(outcome.name, bar.id, tuple(sheet.steps), "The truss is a mechanism: there are no forces.")
+        what = "nearly a mechanism" if outcome.standing.stability.verdict == "nearly a mechanism" else "a mechanism"
+        return BarCheck(outcome.name, bar.id, tuple(sheet.steps), f"The truss is {what}: there are no forces.")
     remark = _write_factor(outcome, number, direction, resistance, sheet)
     return BarCheck(outcome.name, bar.id, tuple(sheet.steps), remark)
 
@@ -148,15 +149,24 @@ def _live_factor(sheet: Sheet, level: Level, kinds: Collection[str]) -> Number:
     return sheet.given(f"gLL {level.name}", level.live_factor(kinds), "ratio", title, level.source)
 
 
+def _told(outcome: Outcome, number: int, direction: int) -> str:
+    """What the condition factor rests on."""
+    state = outcome.conditions[number].state
+    strength = outcome.task.strength
+    raised = strength.pieces.raises[strength.piece[direction][number]]
+    rests_on = f"state {state}" if state else "no state on record: as fair"
+    why = "; raised, as the section was measured on cleaned steel" if raised else ""
+    return f"condition factor, {rests_on}{why}"
+
+
 def _write_capacity(outcome: Outcome, number: int, direction: int, resistance: Number, sheet: Sheet) -> Number:
     """Resistance times condition and system factor, where the basis has them."""
     condition = float(outcome.condition_factor[direction, number])
     system = float(outcome.system_factor[number])
     if math.isnan(condition):
         return sheet.note("C", resistance * 1.0, "force", "capacity")
-    state = outcome.conditions[number].state
-    told = f"condition factor, state {state}" if state else "condition factor, no state on record: as fair"
-    phi_c = sheet.given("phi_c", condition, "ratio", told)
+    phi_c_told = _told(outcome, number, direction)
+    phi_c = sheet.given("phi_c", condition, "ratio", phi_c_told)
     phi_s = sheet.given("phi_s", system, "ratio", "system factor")
     combined = sheet.note(
         "phi_c phi_s", outcome.task.basis.combined_factor(phi_c, phi_s), "ratio", "their product, 0.85 at least"
