@@ -14,8 +14,7 @@ from models.rating.factor import factored_dead
 from models.rating.outcome import Outcome
 from models.rating.prepare import HALF_THROUGH_K, PreparedTruss, held_by_frames
 from models.rating.result import Reaction
-from models.resistance.columns import column_strength, elastic_critical_load, slenderness
-from models.resistance.effective import ROUND_COVERED, slender_parts, thin_tubes
+from models.resistance.columns import elastic_critical_load, slenderness
 from models.section import centroid_shift
 from models.words import Figures
 from models.words import rating as sentences
@@ -86,8 +85,9 @@ def _compression_leaves_out(outcome: Outcome, figures: Figures, bridge: Footbrid
     """Tubes beyond the rule, sections that are not doubly symmetric, centroid shift and bow."""
     stock, strength = outcome.task.stock, outcome.task.strength
     pieces = strength.pieces
-    for number in np.unique(pieces.owner[thin_tubes(strength.member, strength.plates, ROUND_COVERED)]).tolist():
-        yield number, "left out", sentences.tube_beyond_rule(ROUND_COVERED)
+    if strength.upper.uncovered is not None:
+        for number in np.unique(pieces.owner[strength.upper.uncovered]).tolist():
+            yield number, "left out", sentences.tube_beyond_rule(outcome.task.basis.tube_rule)
     for number, fitted in enumerate(stock.fitted):
         if not fitted.built.doubly_symmetric:
             yield number, "left out", sentences.not_doubly_symmetric()
@@ -124,13 +124,11 @@ def _deck_on_chord(outcome: Outcome, figures: Figures, bridge: Footbridge) -> _F
 def _slender_plates(outcome: Outcome, figures: Figures, bridge: Footbridge) -> _Found:
     """Bars of whose section only a part counts in compression, by the piece of which least does."""
     strength = outcome.task.strength
-    reduced = np.flatnonzero(np.less(strength.counted, 1.0))
-    if not len(reduced):
+    thin = strength.upper.slender
+    if thin is None:
         return
-    member, owner, counted = strength.member, strength.pieces.owner, np.asarray(strength.counted)
-    thin = slender_parts(
-        member, strength.plates, column_strength(member.Fy * member.area, elastic_critical_load(member))
-    )
+    owner, counted = strength.pieces.owner, strength.upper.counted
+    reduced = np.flatnonzero(counted < 1.0)
     for number in np.unique(owner[reduced]).tolist():
         piece = min(np.flatnonzero(owner == number).tolist(), key=counted.__getitem__)
         pieces = outcome.task.stock.fitted[number].built.pieces

@@ -7,10 +7,10 @@ from dataclasses import dataclass
 import numpy as np
 from numpy.typing import NDArray
 
-from models.calculation import Array, NoSheet, Number
+from models.calculation import Array, NoSheet
 from models.condition import READING, BarCondition
 from models.rating.fitted import Stock
-from models.resistance.protocol import Basis, Member
+from models.resistance.protocol import Basis, Member, Resistance
 from models.section import Plates, Properties, Stack, plates_of, properties
 
 _TIE = 1e-9
@@ -94,13 +94,14 @@ class Strength:
     check : (2, m) number in `CHECKS` of what limits it at the upper level.
     piece : (2, m) number of the piece that limits it. least : (m,) piece of least area.
     area : (m,) least remaining, m^2.
-    member, plates : numbers (n,) of the pieces. counted : (n,) part of their area that counts in compression, or 1.
+    member : numbers (n,) of the pieces. upper : what each of them resists at the upper level.
+    own_levels : numbers of the levels below the upper one that have resistances of their own.
     """
 
     pieces: Pieces
     member: Member
-    plates: Plates
-    counted: Number
+    upper: Resistance
+    own_levels: tuple[int, ...]
     resistance: Array
     check: NDArray[np.int64]
     piece: NDArray[np.int64]
@@ -125,8 +126,8 @@ def strength_of(basis: Basis, stock: Stock, conditions: tuple[BarCondition, ...]
     return Strength(
         pieces=pieces,
         member=member,
-        plates=plates,
-        counted=upper.counted,
+        upper=upper,
+        own_levels=tuple(number for number, level in enumerate(found) if level is not upper),
         resistance=resistance,
         check=np.array([fractures, np.full_like(fractures, 2)]),
         piece=governing,

@@ -11,7 +11,7 @@ AISC 360-22 E7 and Table E7.1 (read in a transcription); AASHTO LRFD 6.9.4.2.2 (
 from __future__ import annotations
 
 from dataclasses import replace
-from typing import Final
+from typing import Final, NamedTuple
 
 import numpy as np
 from numpy.typing import NDArray
@@ -25,6 +25,8 @@ ROUND_LIMIT: Final = 0.11
 ROUND_COVERED: Final = 0.45
 """The same, up to which there is a published rule (AISC 360-22 E7.2, read)."""
 
+TUBE_RULE: Final = f"{ROUND_COVERED:.2f} E/Fy, beyond which no rule is published (AISC 360 E7.2)"
+
 BREADTHS: Final = "AISC 360-22 E7.1; AASHTO LRFD 6.9.4.2.2 (from memory)"
 _ROUND: Final = "AISC 360-22 E7.2; AASHTO LRFD 6.9.4.2.2 (from memory)"
 _TABLE: Final = "AISC 360 Table B4.1a; AASHTO LRFD 6.9.4.2.1 (from memory)"
@@ -32,7 +34,16 @@ _NEGLIGIBLE: Final = 1e-12
 """A column stress below this part of yield: nothing buckles on its own under it."""
 
 
-def counted_strength(member: Member, column: Number, sheet: Sheet) -> tuple[Number, Number]:
+class Counted(NamedTuple):
+    """A compressive resistance, N, with what decided how much of the section counts, as in `Resistance`."""
+
+    strength: Number
+    share: Number = 1.0
+    slender: NDArray[np.bool_] | None = None
+    uncovered: NDArray[np.bool_] | None = None
+
+
+def counted_strength(member: Member, column: Number, sheet: Sheet) -> Counted:
     """Nominal compressive resistance where slender plates bear only part of the column's stress.
 
     Parameters
@@ -42,16 +53,11 @@ def counted_strength(member: Member, column: Number, sheet: Sheet) -> tuple[Numb
 
     Returns
     -------
-    The resistance, N, and the part of the area that counts; ``column`` itself and 1 where all of it does.
+    The resistance and the part of the area that counts; ``column`` itself and 1 where all of it does.
     """
     if isinstance(member.plates, WrittenPlates):
         return _of_one(member, member.plates, column, sheet)
-    return _of_many(member, member.plates, column) if member.plates else (column, 1.0)
-
-
-def slender_parts(member: Member, plates: Plates, column: Array) -> NDArray[np.bool_]:
-    """Which free parts (n, Q) of plates buckle on their own before the column's strength (n,), N, is reached."""
-    return plates.slender(member.E, _stress(member, column))
+    return _of_many(member, member.plates, column) if member.plates else Counted(column)
 
 
 def thin_tubes(member: Member, plates: Plates, limit: float) -> NDArray[np.bool_]:
@@ -70,11 +76,11 @@ def _stress(member: Member, column: Array) -> Array:
     return found
 
 
-def _of_many(member: Member, plates: Plates, column: Array) -> tuple[Array, Number]:
+def _of_many(member: Member, plates: Plates, column: Array) -> Counted:
     stress = _stress(member, column)
     thin, tubes = plates.slender(member.E, stress), thin_tubes(member, plates, ROUND_LIMIT)
     if not thin.any() and not tubes.any():
-        return column, 1.0
+        return Counted(column)
     area, where = member.area, np.nonzero(thin)
     bars, strip = where[0], plates.strip(where)
     breadth = effective_breadth(strip, member.E[bars], member.Fy[bars], stress[bars], NoSheet())
@@ -85,19 +91,24 @@ def _of_many(member: Member, plates: Plates, column: Array) -> tuple[Array, Numb
         effective[tubes] = area[tubes] * effective_share(ring, member.E[tubes], member.Fy[tubes], NoSheet())
     # a bar with nothing slender keeps its figure to the last digit, whatever stands beside it
     reduced = effective < area
-    return np.where(reduced, stress * effective, column), np.divide(effective, area, np.ones_like(area), where=reduced)
+    return Counted(
+        np.where(reduced, stress * effective, column),
+        np.divide(effective, area, np.ones_like(area), where=reduced),
+        thin,
+        thin_tubes(member, plates, ROUND_COVERED),
+    )
 
 
-def _of_one(member: Member, plates: WrittenPlates, column: Number, sheet: Sheet) -> tuple[Number, Number]:
+def _of_one(member: Member, plates: WrittenPlates, column: Number, sheet: Sheet) -> Counted:
     if not member.area.value:
-        return column, 1.0
+        return Counted(column)
     E, Fy, stress = member.E.value, member.Fy.value, column.value / member.area.value
     thin = [strip for strip in plates.strips if strip.thickness.value and _is_slender(strip, E, Fy, stress)]
     ring = plates.ring if plates.ring and plates.ring.thickness.value else None
     if ring and float(_thinness(ring)) <= ROUND_LIMIT * E / Fy:
         ring = None
     if not thin and not ring:
-        return column, 1.0
+        return Counted(column)
     gross = sheet.note(
         "Pcr", column, "force", "nominal resistance of the column, all of its section counting", BREADTHS
     )
@@ -110,7 +121,7 @@ def _of_one(member: Member, plates: WrittenPlates, column: Number, sheet: Sheet)
         effective = effective_area(member.area, sum(lost[1:], lost[0]), plates.table)
     source = _ROUND if ring else BREADTHS
     effective = sheet.note("Ae", effective, "area", "effective area", source)
-    return stress * effective, effective.value / member.area.value
+    return Counted(stress * effective, effective.value / member.area.value)
 
 
 def _named(strip: Strip, sheet: Sheet) -> Strip:

@@ -8,7 +8,7 @@ from typing import Final
 from models.calculation import Number, Sheet, greatest
 from models.errors import InputError, Problem
 from models.resistance.columns import column_strength, elastic_critical_load
-from models.resistance.effective import BREADTHS, counted_strength
+from models.resistance.effective import BREADTHS, TUBE_RULE, counted_strength
 from models.resistance.protocol import DeadFactors, FactorLine, Level, Member, Resistance
 
 PHI_YIELD: Final = 0.95
@@ -49,6 +49,8 @@ class LoadAndResistanceFactorRating:
     components: Final = DeadFactors(1.25, 0.90, _DEAD_FACTORS)
     wearing: Final = DeadFactors(1.50, 0.65, _DEAD_FACTORS)
     rating_source: Final = _RATING_FACTOR
+    tube_rule: Final = TUBE_RULE
+    leaves_out: Final = ()
 
     def condition_factor(self, state: str | None, measured: bool) -> float | None:
         """From the state on record; raised by measurement, to at most 1."""
@@ -79,14 +81,14 @@ class LoadAndResistanceFactorRating:
             "Pe", elastic_critical_load(member), "force", "elastic critical load", f"{_LRFD} 6.9.4.1.2 (from memory)"
         )
         column = column_strength(full, critical)
-        counts, counted = counted_strength(member, column, sheet)
-        source = _COLUMN if counts is column else BREADTHS
-        nominal = sheet.note("Pn", counts, "force", "nominal compressive resistance", source)
+        counts = counted_strength(member, column, sheet)
+        source = _COLUMN if counts.strength is column else BREADTHS
+        nominal = sheet.note("Pn", counts.strength, "force", "nominal compressive resistance", source)
         factored = PHI_COMPRESSION * nominal
         buckling = sheet.note(
             "Prc", factored, "force", "compression, flexural buckling", f"{_LRFD} 6.9.2.1 (from memory)"
         )
-        resistance = Resistance(tension_yield, tension_fracture, buckling, counted)
+        resistance = Resistance(tension_yield, tension_fracture, buckling, *counts[1:])
         return tuple(resistance for _ in self.levels)
 
     def factor_lines(self) -> tuple[FactorLine, ...]:

@@ -11,6 +11,7 @@ from dataclasses import dataclass
 from typing import Protocol
 
 import numpy as np
+from numpy.typing import NDArray
 
 from models.calculation import Number, Sheet, Traced, least
 from models.section import Plates, WrittenPlates
@@ -52,12 +53,17 @@ class Resistance:
     Parameters
     ----------
     counted : part of the area that counts in compression; below 1 where a plate is slender.
+    slender : (n, Q) which free parts of plates lose breadth in compression, None where none does.
+    uncovered : (n,) which members are round tubes beyond the basis's rule for them, None where none is. Both are
+        of arrays alone.
     """
 
     tension_yield: Number
     tension_fracture: Number
     flexural_buckling: Number
     counted: Number = 1.0
+    slender: NDArray[np.bool_] | None = None
+    uncovered: NDArray[np.bool_] | None = None
 
     @property
     def tension(self) -> Number:
@@ -168,12 +174,22 @@ class Basis(Protocol):
     def rating_source(self) -> str:
         """Where the rating factor's own equation stands."""
 
+    @property
+    def tube_rule(self) -> str:
+        """Up to which thinness the basis has a rule for round tubes in compression, and where that stands."""
+
+    @property
+    def leaves_out(self) -> tuple[str, ...]:
+        """What its standards ask for and no figure on this basis has, a sentence each."""
+
     def resistances(self, member: Member, sheet: Sheet) -> tuple[Resistance, ...]:
-        """What a bar resists at each level.
+        """What a bar resists at each level; the upper level's own object again where a level has no other.
+
+        The section of a bar that resists least at one level does so at every level.
 
         Parameters
         ----------
-        sheet : every step is written to it.
+        sheet : every step is written to it, once for all levels that share it.
         """
 
     def factor_lines(self) -> tuple[FactorLine, ...]:

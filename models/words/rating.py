@@ -66,11 +66,11 @@ def slender_plate(plates: tuple[str, ...], counted: float) -> str:
     return f"The {listed(plates)} {verb} slender: {math.floor(100 * counted)} % of the section counts in compression."
 
 
-def tube_beyond_rule(limit: float) -> str:
-    """A round tube thinner than any published rule covers."""
+def tube_beyond_rule(rule: str) -> str:
+    """A round tube thinner than the basis's rule covers."""
     return (
-        f"The diameter over the thickness of the tube is above {limit:.2f} E/Fy, beyond which no rule is published "
-        "(AISC 360 E7.2); the compression figure leaves out how much less of the section may count."
+        f"The diameter over the thickness of the tube is above {rule}; the compression figure leaves out how much "
+        "less of the section may count."
     )
 
 
