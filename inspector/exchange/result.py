@@ -6,7 +6,7 @@ SI base units (N, m, m^2, Pa), tension positive; a value that does not exist is 
 from __future__ import annotations
 
 import json
-from collections.abc import Callable, Mapping
+from collections.abc import Callable, Collection, Mapping
 from dataclasses import dataclass
 from typing import Any, Final, get_args
 
@@ -40,9 +40,16 @@ _FIGURE_OR_NULL: Final = nullable(_FIGURE, (int, float))
 _COUNT: Final = Whole(-(2**31), 2**31)
 
 
-def _record(takes: Mapping[str, tuple[Form[Any], Callable[[Any], Any]]], about: Mapping[str, str]) -> Record[Any]:
+def _record(
+    takes: Mapping[str, tuple[Form[Any], Callable[[Any], Any]]],
+    about: Mapping[str, str],
+    optional: Collection[str] = (),
+) -> Record[Any]:
     """A record of a result: each key with its form and how it is taken from the rating."""
-    keys = tuple(Key(name, form, name, required=True, about=about.get(name, "")) for name, (form, _) in takes.items())
+    keys = tuple(
+        Key(name, form, name, required=name not in optional, about=about.get(name, ""))
+        for name, (form, _) in takes.items()
+    )
     return Record(keys, dict, lambda value, name: takes[name][1](value), grows=True)
 
 
@@ -90,6 +97,7 @@ _BAR: Final[Form[BarRating]] = _record(
         "dead": (nullable(_DEAD, dict), lambda bar: None if bar.dead_components is None else bar),
         "live": (nullable(Named(_EFFECT), dict), _of("live")),
         "resistance": (_RESISTANCE, lambda bar: bar),
+        "resistance inventory": (_RESISTANCE, lambda bar: bar.lower_levels.get("inventory")),
         "condition factor": (_FIGURE_OR_NULL, _of("condition_factor")),
         "system factor": (_FIGURE_OR_NULL, _of("system_factor")),
         "rating factor": (_FACTORS, _factors),
@@ -105,13 +113,15 @@ _BAR: Final[Form[BarRating]] = _record(
         "nominal area": "as built, m^2",
         "dead": "unfactored force; null where the truss does not stand",
         "live": "by name of the load: the most that its worst arrangement gives, unfactored, N",
-        "resistance": "factored, without condition and system factor",
+        "resistance": "factored, without condition and system factor, at the upper level",
+        "resistance inventory": "the same at the inventory level, where it differs: basis `allowable stress`",
         "rating factor": "the lowest over tension, compression and all live loads, by level; null where there is none",
         "check": "what governs at the upper level",
         "load": "the live load that governs at the upper level",
         "loss allowance": "fraction of every plate's remaining thickness that could go before the factor falls to 1",
         "without it": "lowest rating factor of the other bars without this one, or `mechanism`",
     },
+    optional=("resistance inventory",),
 )
 _TRUSS: Final[Form[TrussRating]] = _record(
     {

@@ -9,12 +9,13 @@ from models.bridge import Footbridge
 from models.loading.dead import ASSUMED_CONNECTION_ALLOWANCE
 from models.rating.outcome import Outcome
 from models.rating.prepare import HALF_THROUGH_K, held_by_frames
+from models.resistance.protocol import Basis
 from models.words import rating as sentences
 
 
 def assumptions_of(bridge: Footbridge, outcomes: tuple[Outcome, ...]) -> tuple[str, ...]:
     """The assumptions, each once, in the order in which they bear on the figures."""
-    sentences = [*_loads(bridge), *_bars(outcomes), *_system(bridge)]
+    sentences = [*_loads(bridge), *_bars(outcomes), *_system(bridge, outcomes[0].task.basis)]
     for outcome in outcomes:
         for fitted in outcome.task.stock.fitted:
             sentences.extend(fitted.assumptions)
@@ -60,8 +61,10 @@ def _bars(outcomes: tuple[Outcome, ...]) -> Iterator[str]:
         )
 
 
-def _system(bridge: Footbridge) -> Iterator[str]:
+def _system(bridge: Footbridge, basis: Basis) -> Iterator[str]:
     rules = bridge.rating
+    if basis.system_factor(None) is None:
+        return
     if rules.system is None and any(bar.system is None for truss in bridge.trusses.values() for bar in truss.bars):
         yield "The site names no system; its system factor is taken as for welded bars."
 

@@ -15,6 +15,7 @@ from models.rating.outcome import Outcome
 from models.rating.prepare import HALF_THROUGH_K, PreparedTruss, held_by_frames
 from models.rating.result import Reaction
 from models.resistance.columns import elastic_critical_load, slenderness
+from models.resistance.protocol import Basis
 from models.section import centroid_shift
 from models.words import Figures
 from models.words import rating as sentences
@@ -190,8 +191,10 @@ def _double_bars(prepared: PreparedTruss) -> Iterator[Finding]:
             yield Finding("note", sentences.double_bars(tuple(bars)), prepared.truss.name)
 
 
-def of_bridge(bridge: Footbridge) -> Iterator[Finding]:
-    """Keys that are read and kept, but that no figure uses yet, and what the site does not say."""
+def of_bridge(bridge: Footbridge, basis: Basis) -> Iterator[Finding]:
+    """What the basis leaves out, keys that are read and kept but that no figure uses yet, and what is not said."""
+    for sentence in basis.leaves_out:
+        yield Finding("left out", sentence)
     for load in bridge.rating.live:
         if load.rule is not None:
             why = f"the pressure of `{load.name}` by rule is not computed; give a pressure, or rate by hand."

@@ -7,6 +7,7 @@ from dataclasses import dataclass
 from typing import Final
 
 import numpy as np
+from numpy.typing import NDArray
 
 from models.bridge import Bar, Footbridge
 from models.calculation import Array
@@ -117,6 +118,7 @@ class Stock:
     ----------
     area : as built, m^2.
     whole_bar_exponent : how the area follows an even change of every thickness: 2 for round bars, else 1.
+    curves : (2, m) names of buckling curves, in plane and out of plane.
     """
 
     fitted: tuple[Fitted, ...]
@@ -129,6 +131,7 @@ class Stock:
     shear_lag: Array
     area: Array
     whole_bar_exponent: Array
+    curves: NDArray[np.str_]
 
 
 def stock(fitted: Sequence[Fitted]) -> Stock:
@@ -140,4 +143,5 @@ def stock(fitted: Sequence[Fitted]) -> Stock:
     exponent = np.array([2.0 if bar.built.shape == "round bar" else 1.0 for bar in fitted])
     E, Fy, Fu, density, net_area, shear_lag, area = columns.T
     stacked = stack([bar.built for bar in fitted])
-    return Stock(tuple(fitted), stacked, E, Fy, Fu, density, net_area, shear_lag, area, exponent)
+    curves = np.array([bar.built.curves for bar in fitted]).T
+    return Stock(tuple(fitted), stacked, E, Fy, Fu, density, net_area, shear_lag, area, exponent, curves)

@@ -6,7 +6,7 @@ Each line carries its formula, its numbers, its unit and its clause, so that a r
 from __future__ import annotations
 
 import math
-from collections.abc import Collection, Iterable
+from collections.abc import Collection, Iterable, Mapping
 from dataclasses import dataclass
 
 from models.calculation import HandCheck, Number, Sheet, Step, greatest
@@ -59,15 +59,16 @@ def _check(outcome: Outcome, number: int) -> BarCheck:
     piece = int(outcome.task.strength.piece[direction][number])
     basis = outcome.task.basis
     member = _member(outcome, number, piece, sheet)
-    level = basis.resistances(member, sheet)[-1]
-    resistance = (level.tension, level.flexural_buckling)[direction]
+    levels = basis.resistances(member, sheet)
     if number in outcome.severed or number in outcome.cracked:
         what = "severed" if number in outcome.severed else "cracked and pulled"
         return BarCheck(outcome.name, bar.id, tuple(sheet.steps), f"The bar is {what}: it gets no credit.")
     if outcome.solved is None:
         what = "nearly a mechanism" if outcome.standing.stability.verdict == "nearly a mechanism" else "a mechanism"
         return BarCheck(outcome.name, bar.id, tuple(sheet.steps), f"The truss is {what}: there are no forces.")
-    remark = _write_factor(outcome, number, direction, resistance, sheet)
+    own = (*outcome.task.strength.own_levels, len(levels) - 1)
+    resisted = {at: (levels[at].tension, levels[at].flexural_buckling)[direction] for at in own}
+    remark = _write_factor(outcome, number, direction, resisted, sheet)
     return BarCheck(outcome.name, bar.id, tuple(sheet.steps), remark)
 
 
@@ -102,18 +103,25 @@ def _member(outcome: Outcome, number: int, piece: int, sheet: Sheet) -> Member:
         effective_length_out_of_plane=sheet.given("Lo", lengths[1], "length", "effective length out of plane, K L"),
         net_area=sheet.given("An/A", fitted.net_area, "ratio", "net over gross area"),
         shear_lag=sheet.given("U", fitted.shear_lag, "ratio", "shear lag factor"),
+        curves=fitted.built.curves,
         plates=write_plates(fitted.built, thickness),
     )
 
 
-def _write_factor(outcome: Outcome, number: int, direction: int, resistance: Number, sheet: Sheet) -> str:
-    """Capacity, factored dead load and rating factors; returns a remark where there is no factor."""
+def _write_factor(outcome: Outcome, number: int, direction: int, resisted: Mapping[int, Number], sheet: Sheet) -> str:
+    """Capacity, factored dead load and rating factors; returns a remark where there is no factor.
+
+    Parameters
+    ----------
+    resisted : resistance by number of the level, the upper level and those that have their own.
+    """
     solved, basis = outcome.solved, outcome.task.basis
     if solved is None:
         return ""
     figures, sign = solved.figures, (1.0, -1.0)[direction]
     name = ("tension", "compression")[direction]
-    capacity = _write_capacity(outcome, number, direction, resistance, sheet)
+    capacities = _write_capacities(outcome, number, direction, resisted, sheet)
+    capacity = capacities[len(basis.levels) - 1]
     components = sheet.given("DC", sign * figures.dead[0, number], "force", f"dead load of components, as {name}")
     wearing = sheet.given("DW", sign * figures.dead[1, number], "force", f"wearing course, as {name}")
     gdc = _dead_factor(sheet, "gDC", basis.components, components)
@@ -130,9 +138,9 @@ def _write_factor(outcome: Outcome, number: int, direction: int, resistance: Num
     live_name = solved.loads[load]
     size = max(sign * float(figures.live[load, direction, number]), 0.0)
     live = sheet.given("LL", size, "force", f"{live_name} at its worst, as {name}")
-    for level in basis.levels:
+    for at, level in enumerate(basis.levels):
         gamma = _live_factor(sheet, level, outcome.prepared.kinds[live_name])
-        factor = (capacity - (gdc * components + gdw * wearing)) / (gamma * live)
+        factor = (capacities.get(at, capacity) - (gdc * components + gdw * wearing)) / (gamma * live)
         title = f"rating factor, {level.name}"
         sheet.note(f"RF {level.name}", greatest(factor, 0.0), "ratio", title, basis.rating_source)
     return ""
@@ -159,16 +167,32 @@ def _told(outcome: Outcome, number: int, direction: int) -> str:
     return f"condition factor, {rests_on}{why}"
 
 
-def _write_capacity(outcome: Outcome, number: int, direction: int, resistance: Number, sheet: Sheet) -> Number:
-    """Resistance times condition and system factor, where the basis has them."""
+def _write_capacities(
+    outcome: Outcome, number: int, direction: int, resisted: Mapping[int, Number], sheet: Sheet
+) -> dict[int, Number]:
+    """Resistance times condition and system factor, where the basis has them, by number of the level."""
+    combined = _write_factors(outcome, number, direction, sheet)
+    levels = [level.name for level in outcome.task.basis.levels]
+    names = {at: f" {levels[at]}" if len(resisted) > 1 else "" for at in resisted}
+    return {
+        at: sheet.note(
+            f"C{names[at]}",
+            resistance if combined is None else combined * resistance,
+            "force",
+            f"capacity,{names[at]}" if names[at] else "capacity",
+        )
+        for at, resistance in resisted.items()
+    }
+
+
+def _write_factors(outcome: Outcome, number: int, direction: int, sheet: Sheet) -> Number | None:
+    """Condition times system factor; None where the basis has none."""
     condition = float(outcome.condition_factor[direction, number])
     system = float(outcome.system_factor[number])
     if math.isnan(condition):
-        return sheet.note("C", resistance * 1.0, "force", "capacity")
+        return None
     phi_c_told = _told(outcome, number, direction)
     phi_c = sheet.given("phi_c", condition, "ratio", phi_c_told)
     phi_s = sheet.given("phi_s", system, "ratio", "system factor")
-    combined = sheet.note(
-        "phi_c phi_s", outcome.task.basis.combined_factor(phi_c, phi_s), "ratio", "their product, 0.85 at least"
-    )
-    return sheet.note("C", combined * resistance, "force", "capacity")
+    product = outcome.task.basis.combined_factor(phi_c, phi_s)
+    return sheet.note("phi_c phi_s", product, "ratio", "their product, 0.85 at least")

@@ -42,7 +42,7 @@ def rating_of(condition: Condition, outcomes: tuple[Outcome, ...], basis: Basis,
     """What solved trusses say, as values ready to be shown."""
     bridge = condition.bridge
     trusses = {outcome.name: _truss_rating(bridge, outcome) for outcome in outcomes}
-    found = [*findings.of_bridge(bridge), *condition.findings]
+    found = [*findings.of_bridge(bridge, basis), *condition.findings]
     for outcome in outcomes:
         found.extend(findings.of_truss(bridge, outcome, trusses[outcome.name].reactions))
     bars = tuple(chain.from_iterable(truss.bars for truss in trusses.values()))

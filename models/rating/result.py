@@ -4,6 +4,7 @@ from __future__ import annotations
 
 from collections.abc import Mapping
 from dataclasses import dataclass
+from types import MappingProxyType
 from typing import Literal, NamedTuple
 
 from models.finding import Finding
@@ -18,6 +19,13 @@ class Effect(NamedTuple):
     minimum: float
 
 
+class Resisted(NamedTuple):
+    """Factored resistances in both directions, N, condition and system factors not in them."""
+
+    tension: float
+    compression: float
+
+
 class BarRating(NamedTuple):
     """One bar's figures. ``None`` where a figure does not exist.
 
@@ -29,7 +37,7 @@ class BarRating(NamedTuple):
     area, nominal_area : least remaining, and as built, m^2.
     dead_components, dead_wearing : N, unfactored, tension positive.
     live : by load name, N; None in a mechanism.
-    tension, compression : factored resistance, N, condition and system factors not in it.
+    tension, compression : factored resistance at the upper level, N, condition and system factors not in it.
     tension_check, compression_check : what limits each of them.
     rating_factor : by level; a value is None where no live load acts that way.
     check, load, direction : what governs at the upper level; None where nothing does. ``direction`` is
@@ -39,6 +47,7 @@ class BarRating(NamedTuple):
     capacity : resistance times condition and system factor, of the governing direction, N.
     loss_allowance : fraction of every plate's remaining thickness that could still go.
     without_it : ``mechanism``, or the lowest rating factor of the truss's other bars.
+    lower_levels : by level: the resistance at a level below the upper one that has its own.
     """
 
     truss: str
@@ -69,6 +78,7 @@ class BarRating(NamedTuple):
     loss_allowance: float | None
     without_it: float | Literal["mechanism"] | None
     findings: tuple[Finding, ...] = ()
+    lower_levels: Mapping[str, Resisted] = MappingProxyType({})
 
     @property
     def demand_over_capacity(self) -> float | None:

@@ -13,7 +13,7 @@ from models.finding import Finding
 from models.rating.answer import Answer
 from models.rating.factor import live_factors
 from models.rating.outcome import Outcome
-from models.rating.result import BarRating, Effect, Reaction
+from models.rating.result import BarRating, Effect, Reaction, Resisted
 from models.rating.solved import Figures
 from models.rating.strength import CHECKS
 from models.resistance.protocol import Basis
@@ -98,7 +98,18 @@ class _Table:
             "condition_factor": _cells(condition),
             "system_factor": _cells(outcome.system_factor),
             "where": self._where(),
+            "lower_levels": self._lower_levels(),
         }
+
+    def _lower_levels(self) -> list[Any]:
+        task = self.outcome.task
+        by_level = {
+            task.basis.levels[number].name: [
+                Resisted._make(pair) for pair in task.strength.resistance[number].T.tolist()
+            ]
+            for number in task.strength.own_levels
+        }
+        return [{name: rows[bar] for name, rows in by_level.items()} for bar in range(self.count)]
 
     def _where(self) -> list[Any]:
         conditions = self.outcome.conditions

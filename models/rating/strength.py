@@ -80,6 +80,7 @@ def member_of(
         effective_length_out_of_plane=effective_lengths[1][owner],
         net_area=stock.net_area[owner],
         shear_lag=stock.shear_lag[owner],
+        curves=stock.curves[:, owner],
         plates=plates,
     )
 

@@ -10,11 +10,13 @@ from typing import Final
 
 import numpy as np
 
-from models.calculation import Array, Number, Traced, choose, least, root
+from models.calculation import Number, Traced, choose, least, root
 from models.resistance.protocol import Member
 
 ELASTIC_BELOW: Final = 0.44
 """Pe/Po below which a column buckles elastically (AASHTO LRFD 6.9.4.1.1, from memory)."""
+
+_LEAST_LOAD: Final = 1e-250
 
 
 def elastic_critical_load(member: Member) -> Number:
@@ -48,11 +50,15 @@ def column_strength(yield_load: Number, critical_load: Number) -> Number:
     return choose(critical_load, ">=", ELASTIC_BELOW * yield_load, inelastic, 0.877 * critical_load)
 
 
-def slenderness(E: Array, area: Array, critical_load: Array) -> Array:
-    """KL/r (n,) of the axis about which each bar buckles; 0 where no area is left."""
-    load = np.maximum(critical_load, np.finfo(float).tiny)
-    found: Array = np.where(area > 0, math.pi * np.sqrt(E * area / load), 0.0)
-    return found
+def slenderness(E: Number, area: Number, critical_load: Number) -> Number:
+    """KL/r of the axis about which a bar buckles; 0 where no area is left.
+
+    A load below 1e-250 N counts as that much, so that the square can still be written down.
+    """
+    if isinstance(critical_load, Traced):
+        return math.pi * root(E * area / critical_load) if critical_load.value and area.value else 0.0 * area
+    ratio = math.pi * np.sqrt(E * area / np.maximum(critical_load, _LEAST_LOAD))
+    return np.where(area > 0, ratio, 0.0)
 
 
 def _over(number: Number, divisor: Number) -> Number:

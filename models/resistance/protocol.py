@@ -29,6 +29,7 @@ class Member:
         in-plane buckling) and the vertical axis, m^4.
     effective_length_in_plane, effective_length_out_of_plane : K times length, m.
     net_area, shear_lag : fractions of the area that count in fracture.
+    curves : names of the buckling curves of EN 1993-1-1 in and out of plane: two, or an array (2, n).
     plates : what decides whether plates buckle on their own; None where none can.
     """
 
@@ -43,6 +44,7 @@ class Member:
     effective_length_out_of_plane: Number
     net_area: Number
     shear_lag: Number
+    curves: tuple[str, str] | NDArray[np.str_] = ("d", "d")
     plates: Plates | WrittenPlates | None = None
 
 

@@ -8,7 +8,7 @@ from typing import Final
 from models.bridge import Section
 from models.errors import Problem
 from models.section.plate import OUTSTAND, Free, Plate, level, upright
-from models.section.shape import Key, Shape, length, pair, quantity
+from models.section.shape import Key, Shape, curve, length, pair, quantity
 
 LEG_LIMIT: Final = 0.45
 """Legs of single angles and of double angles held apart by packs, in axial compression: AISC 360 Table B4.1a
@@ -67,11 +67,12 @@ def _too_thick(section: Section) -> Iterator[Problem]:
         )
 
 
-ANGLE: Final = Shape("angle", _KEYS, ("vertical leg", "horizontal leg"), _single, _too_thick)
+ANGLE: Final = Shape("angle", _KEYS, ("vertical leg", "horizontal leg"), _single, curve("b"), _too_thick)
 DOUBLE_ANGLE: Final = Shape(
     "double angle",
     (*_KEYS, Key("gap", "length", "clear distance between the vertical legs, back to back", may_be_zero=True)),
     ("left vertical leg", "left horizontal leg", "right vertical leg", "right horizontal leg"),
     _double,
+    curve("b"),
     _too_thick,
 )

@@ -10,7 +10,7 @@ from typing import Final
 from models.bridge import Rectangle, Section
 from models.errors import Problem
 from models.section.plate import HELD, OUTSTAND, Free, Imperfection, Plate, level, upright
-from models.section.shape import Key, Shape, rectangles
+from models.section.shape import Key, Shape, curve, rectangles
 
 OUTSTAND_LIMIT: Final = 0.45
 """A part of a plate held along one edge: AISC 360 Table B4.1a case 3, all other unstiffened elements; AASHTO LRFD
@@ -94,5 +94,6 @@ BUILT_UP: Final = Shape(
     ),
     (),
     _cut,
+    curve("c"),
     _overlaps,
 )

@@ -8,7 +8,7 @@ from typing import Final
 from models.bridge import Section
 from models.errors import Problem
 from models.section.plate import HELD, OUTSTAND, Free, Plate, level, upright
-from models.section.shape import Key, Option, Shape, length, quantity
+from models.section.shape import Curves, Key, Option, Shape, curve, length, quantity
 
 FLANGE_LIMIT: Final = 0.56
 """Flanges of rolled I sections, channels and tees: AISC 360 Table B4.1a case 1; AASHTO LRFD 6.9.4.2.1
@@ -19,6 +19,13 @@ STEM_LIMIT: Final = 0.75
 """Stems of tees: the same table, case 4."""
 WEB_LIMIT: Final = 1.49
 """Webs held along both edges: the same table, case 5."""
+
+TALL: Final = 1.2
+"""Depth over width above which rolled I sections buckle by better curves: EN 1993-1-1, Table 6.2 (from memory)."""
+THICK: Final = 0.040
+"""Thickness of flanges above which curves are worse, m: the same table."""
+VERY_THICK: Final = 0.100
+"""The same for rolled I sections that are not tall, m."""
 
 _KEYS: Final = (
     Key("depth", "length", "overall depth, in the plane of the truss"),
@@ -53,6 +60,17 @@ def _i_section(section: Section) -> tuple[Plate, ...]:
     half = length(section, "flange width") / 2
     limit, web = (FLANGE_LIMIT, None) if section.rolled else (WELDED_FLANGE_LIMIT, "web")
     return _two_flanges(section, 0.0, 0.0, Free(half, limit, OUTSTAND, count=2, web=web))
+
+
+def _i_curves(section: Section) -> Curves:
+    """EN 1993-1-1, Table 6.2 (from memory), steels up to S420: rolled, by depth over width; welded; thick flanges."""
+    tall = length(section, "depth") > TALL * length(section, "flange width")
+    flange = length(section, "flange thickness")
+    if not section.rolled:
+        return ("b", "c") if flange <= THICK else ("c", "d")
+    if tall:
+        return ("a", "b") if flange <= THICK else ("b", "c")
+    return ("b", "c") if flange <= VERY_THICK else ("d", "d")
 
 
 def _tee(section: Section) -> tuple[Plate, ...]:
@@ -90,8 +108,8 @@ def _too_thick_one(section: Section) -> Iterator[Problem]:
     return _too_thick(section, 1)
 
 
-CHANNEL: Final = Shape("channel", _KEYS, ("web", "top flange", "bottom flange"), _channel, _too_thick_two)
+CHANNEL: Final = Shape("channel", _KEYS, ("web", "top flange", "bottom flange"), _channel, curve("c"), _too_thick_two)
 I_SECTION: Final = Shape(
-    "i section", _KEYS, ("web", "top flange", "bottom flange"), _i_section, _too_thick_two, (_ROLLED,)
+    "i section", _KEYS, ("web", "top flange", "bottom flange"), _i_section, _i_curves, _too_thick_two, (_ROLLED,)
 )
-TEE: Final = Shape("tee", _KEYS, ("flange", "web"), _tee, _too_thick_one)
+TEE: Final = Shape("tee", _KEYS, ("flange", "web"), _tee, curve("c"), _too_thick_one)

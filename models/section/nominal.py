@@ -11,6 +11,7 @@ from models.calculation import Array
 from models.errors import InputError, Problem
 from models.section.plate import Plate, Rows, coefficients
 from models.section.registry import faults, shape_of
+from models.section.shape import Curves
 from models.section.values import Properties, Tables, from_plates, ruled
 
 SAME = 1e-6
@@ -31,6 +32,7 @@ class Built:
     doubly_symmetric : whether both axes through the centroid are axes of symmetry, so that no twisting
         goes with buckling about them.
     tables : factors of this section's table values (floats).
+    curves : buckling curves in the plane of the truss and out of it, EN 1993-1-1, Table 6.2 (from memory).
     """
 
     section: str
@@ -42,6 +44,7 @@ class Built:
     depth: float
     doubly_symmetric: bool
     tables: Tables
+    curves: Curves
 
 
 def built(section: Section, turned: int = 0) -> Built:
@@ -63,6 +66,7 @@ def built(section: Section, turned: int = 0) -> Built:
     thickness = np.array([plate.thickness for plate in pieces])
     plain = _single(from_plates(rows_of(pieces), thickness))
     tables = _tables(section, turned, plain)
+    about_horizontal, about_vertical = shape_of(section).curves(section)
     return Built(
         section=section.name,
         shape=section.shape,
@@ -73,6 +77,7 @@ def built(section: Section, turned: int = 0) -> Built:
         depth=_depth(pieces),
         doubly_symmetric=_mirrored(pieces, plain),
         tables=tables,
+        curves=(about_vertical, about_horizontal) if turned else (about_horizontal, about_vertical),
     )
 
 

@@ -45,17 +45,21 @@ _TURNED: Final = {LEVEL: UPRIGHT, UPRIGHT: LEVEL, RING: RING, DISC: DISC}
 
 
 class Imperfection(NamedTuple):
-    """The two numbers by which a slender plate's own imperfections lower its effective breadth."""
+    """How a slender part of a plate is held, and the two numbers by which its imperfections lower what counts of it.
+
+    ``held`` is whether it is held along both edges, not along one alone.
+    """
 
     c1: float
     c2: float
+    held: bool
 
 
-HELD: Final = Imperfection(0.18, 1.31)
+HELD: Final = Imperfection(0.18, 1.31, held=True)
 """Plates held along both edges, other than walls of rectangular tubes: AISC 360-22 Table E7.1 (read)."""
-TUBE_WALL: Final = Imperfection(0.20, 1.38)
+TUBE_WALL: Final = Imperfection(0.20, 1.38, held=True)
 """Walls of square and rectangular tubes: the same table."""
-OUTSTAND: Final = Imperfection(0.22, 1.49)
+OUTSTAND: Final = Imperfection(0.22, 1.49, held=False)
 """All other plates: the same table."""
 
 

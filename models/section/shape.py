@@ -12,6 +12,8 @@ from models.quantity import Quantity
 from models.section.plate import Plate
 
 KeyForm = Literal["length", "pair of lengths", "plates"]
+Curves = tuple[str, str]
+"""Names of the buckling curves of EN 1993-1-1 about the section's horizontal and its vertical axis."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -53,6 +55,7 @@ class Shape:
     ----------
     plates : names in order; empty where the section itself names them.
     cut : a section as built -> its plates.
+    curves : a section as built -> its buckling curves, EN 1993-1-1, Table 6.2 (from memory).
     too_thick : a section with positive dimensions -> what does not fit, paths relative to the section;
         None where any positive dimensions fit.
     """
@@ -61,8 +64,14 @@ class Shape:
     keys: tuple[Key, ...]
     plates: tuple[str, ...]
     cut: Callable[[Section], tuple[Plate, ...]]
+    curves: Callable[[Section], Curves]
     too_thick: Callable[[Section], Iterator[Problem]] | None = None
     options: tuple[Option, ...] = ()
+
+
+def curve(name: str) -> Callable[[Section], Curves]:
+    """The same buckling curve about both axes, for every section of a shape."""
+    return lambda _: (name, name)
 
 
 def length(section: Section, key: str) -> float:

@@ -125,6 +125,7 @@ def write_plates(built: Built, thickness: Array) -> WrittenPlates:
                 limit=free.limit,
                 c1=free.imperfection.c1,
                 c2=free.imperfection.c2,
+                held=free.imperfection.held,
                 count=free.count * len(places),
                 kc=None if web is None else flange_factor(breadths[web], left[web]),
                 plates=", ".join(built.plates[place] for place in places),

@@ -32,7 +32,7 @@ class Strip:
     thickness : remaining, m.
     limit : the greatest slenderness at which it reaches yield is limit * sqrt(kc E/Fy).
     kc : lowers the limit of flanges welded to a web; None for 1.
-    c1, c2 : imperfections. count : how many alike there are.
+    c1, c2 : imperfections. held : whether along both edges. count : how many alike there are.
     plates, number : what a hand check calls it, and what follows the letter of its symbols.
     """
 
@@ -42,6 +42,7 @@ class Strip:
     limit: Number
     c1: Number
     c2: Number
+    held: Number
     count: Number
     kc: Number | None = None
     plates: str = ""
@@ -97,9 +98,9 @@ class Plates:
 
     def strip(self, where: tuple[NDArray[np.int64], ...]) -> Strip:
         """The parts at some places, side by side."""
-        free, breadth, limit, c1, c2, count = self.parts.sizes[where].T
+        free, breadth, limit, c1, c2, held, count = self.parts.sizes[where].T
         kc = None if self.kc is None else self.kc[where]
-        return Strip(free, breadth, self.thickness[where], limit, c1, c2, count, kc)
+        return Strip(free, breadth, self.thickness[where], limit, c1, c2, held > 0, count, kc)
 
 
 @dataclass(frozen=True, eq=False)

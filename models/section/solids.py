@@ -8,7 +8,7 @@ from typing import Final
 from models.bridge import Section
 from models.errors import Problem
 from models.section.plate import DISC, Plate, upright
-from models.section.shape import Key, Shape, length, quantity
+from models.section.shape import Key, Shape, curve, length, quantity
 
 
 def _round(section: Section) -> tuple[Plate, ...]:
@@ -30,11 +30,12 @@ def _thicker_than_wide(section: Section) -> Iterator[Problem]:
         )
 
 
-ROUND_BAR: Final = Shape("round bar", (Key("diameter", "length", "diameter"),), ("bar",), _round)
+ROUND_BAR: Final = Shape("round bar", (Key("diameter", "length", "diameter"),), ("bar",), _round, curve("c"))
 FLAT_BAR: Final = Shape(
     "flat bar",
     (Key("width", "length", "width, in the plane of the truss"), Key("thickness", "length", "thickness")),
     ("plate",),
     _flat,
+    curve("c"),
     _thicker_than_wide,
 )

@@ -22,7 +22,8 @@ class FreeParts:
     Parameters
     ----------
     reach : (n, Q) free breadth over the coefficient of its limit, m; 0 for padding.
-    sizes : (n, Q, 6) free breadth and how much of it belongs to the plate, m; coefficient of the limit; c1, c2; count.
+    sizes : (n, Q, 7) free breadth and how much of it belongs to the plate, m; coefficient of the limit; c1, c2;
+        1 where it is held along both edges, else 0; count.
     plate : (n, Q) number of each part's plate, or None where all parts are the plates in their order.
     web : (n, Q) number of the web that lowers the limit, or -1; web_breadth : m. None where there is none.
     ring : (n,) mean diameter of round tubes, m, 0 for other sections, or None where there is none.
@@ -110,7 +111,7 @@ def centroid_shift(stack: Stack, thickness: Array) -> Array:
 def _free_parts(builts: Sequence[Built]) -> FreeParts:
     parts = [[(number, free) for number, plate in enumerate(one.pieces) for free in plate.free] for one in builts]
     shape = len(builts), max((len(each) for each in parts), default=0)
-    sizes, plate, web, breadth = np.zeros((*shape, 6)), np.zeros(shape, int), np.full(shape, -1), np.ones(shape)
+    sizes, plate, web, breadth = np.zeros((*shape, 7)), np.zeros(shape, int), np.full(shape, -1), np.ones(shape)
     sizes[..., 2] = 1.0
     for place, (one, each) in enumerate(zip(builts, parts, strict=True)):
         for column, (number, free) in enumerate(each):

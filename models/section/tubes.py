@@ -8,7 +8,7 @@ from typing import Final
 from models.bridge import Section
 from models.errors import Problem
 from models.section.plate import HELD, RING, TUBE_WALL, Free, Plate, level, upright
-from models.section.shape import Key, Option, Shape, length, quantity
+from models.section.shape import Curves, Key, Option, Shape, length, quantity
 
 WALL_LIMIT: Final = 1.40
 """Walls of rectangular tubes: AISC 360 Table B4.1a case 6; AASHTO LRFD 6.9.4.2.1 (from memory). The breadth
@@ -39,6 +39,17 @@ def _round(section: Section) -> tuple[Plate, ...]:
     return (Plate("wall", RING, diameter - wall, wall, 0.0, 0.0),)
 
 
+def _curves(section: Section) -> Curves:
+    """Hot finished a, cold formed c: EN 1993-1-1, Table 6.2 (from memory)."""
+    name = "a" if section.formed == "hot" else "c"
+    return name, name
+
+
+def _box_curves(section: Section) -> Curves:
+    """A box welded of plates b: the same table."""
+    return ("b", "b") if section.formed == "welded" else _curves(section)
+
+
 def _rectangular_too_thick(section: Section) -> Iterator[Problem]:
     wall = quantity(section, "thickness")
     smaller = min(quantity(section, "depth"), quantity(section, "width"), key=lambda side: side.si)
@@ -66,6 +77,7 @@ RECTANGULAR_TUBE: Final = Shape(
     ),
     ("top wall", "bottom wall", "left wall", "right wall"),
     _rectangular,
+    _box_curves,
     _rectangular_too_thick,
     (_FORMED,),
 )
@@ -74,6 +86,7 @@ ROUND_TUBE: Final = Shape(
     (Key("diameter", "length", "outside diameter"), Key("thickness", "length", "thickness of the wall")),
     ("wall",),
     _round,
+    _curves,
     _round_too_thick,
     (_FORMED,),
 )

@@ -53,7 +53,7 @@ COLUMNS = {
 def strip(name: str, count: int = 1) -> Strip:
     """A part as printed, in inches."""
     (limit, c1, c2), ratio, breadth, thickness, *_ = PARTS[name]
-    return Strip(ratio * thickness, breadth, thickness, limit, c1, c2, count)
+    return Strip(ratio * thickness, breadth, thickness, limit, c1, c2, None, count)
 
 
 @pytest.mark.parametrize("name", PARTS)

@@ -15,6 +15,7 @@ from models.errors import BasisNotAvailable
 from models.rating import bar_of as row_of
 from models.rating import hand_check
 from models.rating.result import Rating
+from models.resistance import LRFR, registry
 
 NO_FACTORS = {"inventory": None, "operating": None}
 
@@ -162,34 +163,51 @@ def test_what_is_read_and_not_used_is_told() -> None:
     document["half through"] = {"floor beam": {"section": "tube", "material": "steel", "span": "2 m"}}
     document["overrides"] = [{"truss": "only", "bar": "L0-L1", "what": "Fy", "value": "300 MPa", "why": "tests"}]
     bar_of(document, "U1-U2")["stitch spacing"] = "0.5 m"
-    document["rating"]["live"].append({"name": "by rule", "kind": "crowd", "rule": "en 1991-2"})
     rating = rated(document)
     told = sorted(text.split("`")[1] for text in texts(rating, "not used"))
-    assert told == ["half through", "overrides", "rating/imposed", "rating/live/by rule/rule", "stitch spacing"]
+    assert told == ["half through", "overrides", "rating/imposed", "stitch spacing"]
     assert [row.rating_factor for row in rating.bars] == [row.rating_factor for row in plain.bars]
     assert set(row_of(rating, "only", "L0-L1").live or {}) == {"crowd"}
 
 
-def test_a_load_by_rule_alone_gives_no_factor() -> None:
-    """Where the only live load cannot be computed there is no factor, and the finding says why."""
-    rating = rated(with_live({"name": "by rule", "kind": "crowd", "rule": "aashto 1997"}))
-    assert rating.structure.rating_factor == NO_FACTORS
-    assert "`by rule` by rule is not computed" in texts(rating, "not used")[0]
+@pytest.mark.parametrize(("rule", "pressure"), [("en 1991-2", "5 kPa"), ("aashto 1997", "85 psf")])
+def test_a_crowd_by_rule_on_a_small_deck_is_one_at_its_greatest_pressure(rule: str, pressure: str) -> None:
+    """A rule rates like a pressure; up to 10 m, or 400 ft², it is the greatest, and its text and source are printed."""
+    by_rule = {"name": "people", "kind": "crowd", "rule": rule}
+    plain = {"name": "people", "kind": "crowd", "pressure": pressure}
+    documents = [with_live(load) for load in (by_rule, plain)]
+    for document in documents:
+        for x, _ in truss_of(document)["joints"].values():
+            assert x.endswith(" m")
+        for joint in truss_of(document)["joints"].values():
+            joint[0] = f"{float(joint[0].split()[0]) * 2 / 3:.6f} m"
+    found, expected = (rated(document) for document in documents)
+    for row, other in zip(found.bars, expected.bars, strict=True):
+        assert row.rating_factor == pytest.approx(other.rating_factor, rel=1e-12)
+    assert not texts(found, "not used")
+    line = next(line for line in found.loads if line.what == "people (crowd)")
+    assert (line.value.startswith(RULES[rule].text), line.source) == (True, RULES[rule].source)
 
 
-def test_a_companion_that_cannot_be_computed_takes_its_load_with_it() -> None:
-    """A combination with a load by rule has no figures of its own; half of it would look like all of it."""
-    cart = {"name": "cart", "kind": "concentrated", "force": "5 kN", "with": [{"load": "by rule", "factor": 0.4}]}
-    rating = rated(with_live(cart, {"name": "by rule", "kind": "crowd", "rule": "en 1991-2"}))
-    assert rating.structure.rating_factor == NO_FACTORS
-    assert rating.bars[0].live == {}
+def test_a_load_with_a_crowd_by_rule_beside_it() -> None:
+    """A combination takes a crowd by rule at its own worst, times its factor."""
+    people = {"name": "people", "kind": "crowd", "rule": "en 1991-2"}
+    cart = {"name": "cart", "kind": "concentrated", "force": "5 kN"}
+    both = {**cart, "with": [{"load": "people", "factor": 0.4}]}
+    rating, alone = rated(with_live(both, people)), rated(with_live(cart, people))
+    for row, other in zip(rating.bars, alone.bars, strict=True):
+        assert row.live is not None
+        assert other.live is not None
+        expected = other.live["cart"].maximum + 0.4 * other.live["people"].maximum
+        assert row.live["cart"].maximum == pytest.approx(expected, rel=1e-12)
 
 
-def test_a_basis_that_is_not_built_is_refused_by_name() -> None:
+def test_a_basis_that_is_not_built_is_refused_by_name(monkeypatch: pytest.MonkeyPatch) -> None:
     """The file itself is in order and can be read; only rating it by that basis is refused, naming what there is."""
     document = short()
     document["rating"]["basis"] = "eurocode"
     found = site.read(json.dumps(document))
+    monkeypatch.setattr(registry, "BASES", {"lrfr": LRFR})
     with pytest.raises(BasisNotAvailable, match=r"eurocode.*lrfr"):
         desk.rate(found)
 

@@ -15,7 +15,7 @@ from section.making import ALL, sections
 from models.bridge import Section
 from models.calculation import Array, HandCheck, NoSheet
 from models.errors import BasisNotAvailable, InputError
-from models.resistance import BASES, LRFR, NAMES, Member, Resistance, basis
+from models.resistance import BASES, LRFR, NAMES, Member, Resistance, basis, registry
 from models.section import Properties, built, properties, stack, write_section
 
 GIVEN = {
@@ -157,10 +157,12 @@ def test_every_factor_has_its_clause() -> None:
     assert all(line.source.startswith("AASHTO") and line.source.endswith("(from memory)") for line in lines)
 
 
-def test_bases_are_found_by_name() -> None:
+def test_bases_are_found_by_name(monkeypatch: pytest.MonkeyPatch) -> None:
     """The registry gives the basis that a site names, and says which ones this program has where it lacks one."""
     assert basis("lrfr") is LRFR
     assert set(BASES) <= set(NAMES)
+    assert all(found.name == name for name, found in BASES.items())
+    monkeypatch.setattr(registry, "BASES", {"lrfr": LRFR})
     with pytest.raises(BasisNotAvailable, match="`eurocode` yet; it has `lrfr`"):
         basis("eurocode")
 
@@ -168,5 +170,5 @@ def test_bases_are_found_by_name() -> None:
 def test_a_member_names_every_number_once() -> None:
     """The protocol's member carries exactly the numbers that a basis may use, and what can make plates slender."""
     assert {field.name for field in fields(Member)} == {
-        *GIVEN, "area", "inertia_horizontal", "inertia_vertical", "inertia_product", "plates",
+        *GIVEN, "area", "inertia_horizontal", "inertia_vertical", "inertia_product", "curves", "plates",
     }  # fmt: skip

@@ -3,11 +3,13 @@
 from __future__ import annotations
 
 import math
+from dataclasses import replace
+from typing import Any
 
 import numpy as np
 import pytest
 from numpy.typing import NDArray
-from section.making import ALL, BOX, BUILT_UP, I_SECTION, PIPE, section
+from section.making import ALL, BOX, BUILT_UP, I_SECTION, PIPE, mm, section
 
 from models.bridge import Section
 from models.calculation import Array
@@ -118,16 +120,23 @@ def test_a_cover_plate_has_every_part_that_stands_out_or_spans() -> None:
     """Both outstands of a cover and the part between the webs may buckle, each with its own limit and count."""
     (cover,) = (plate for plate in built(BUILT_BOX).pieces if plate.name == "top")
     found = [(round(1e3 * part.breadth, 6), part.limit, tuple(part.imperfection), part.count) for part in cover.free]
-    assert found == [(26.0, 0.45, (0.22, 1.49), 2), (152.0, 1.49, (0.18, 1.31), 1)]
+    assert found == [(26.0, 0.45, (0.22, 1.49, False), 2), (152.0, 1.49, (0.18, 1.31, True), 1)]
 
 
 def test_imperfections_are_those_of_the_table() -> None:
-    """Walls of tubes, other plates held along both edges, and all others take their row of AISC 360-22 Table E7.1."""
+    """Walls of tubes, other plates held along both edges, and all others take their row of AISC 360-22 Table E7.1.
+
+    The last says whether they are held along both edges.
+    """
     rows = {
-        "tube": (BOX, 0, (0.20, 1.38)), "welded": (WELDED_BOX, 0, (0.18, 1.31)), "web": (I_SECTION, 0, (0.18, 1.31)),
-        "flange": (I_SECTION, 1, (0.22, 1.49)), "channel": (CHANNEL, 1, (0.22, 1.49)), "stem": (TEE, 1, (0.22, 1.49)),
-        "leg": (BACK_TO_BACK, 0, (0.22, 1.49)),
-    }  # fmt: skip
+        "tube": (BOX, 0, (0.20, 1.38, True)),
+        "welded": (WELDED_BOX, 0, (0.18, 1.31, True)),
+        "web": (I_SECTION, 0, (0.18, 1.31, True)),
+        "flange": (I_SECTION, 1, (0.22, 1.49, False)),
+        "channel": (CHANNEL, 1, (0.22, 1.49, False)),
+        "stem": (TEE, 1, (0.22, 1.49, False)),
+        "leg": (BACK_TO_BACK, 0, (0.22, 1.49, False)),
+    }
     found = {name: tuple(built(one).pieces[place].free[0].imperfection) for name, (one, place, _) in rows.items()}
     assert found == {name: expected for name, (*_, expected) in rows.items()}
 
@@ -154,3 +163,41 @@ def test_round_tubes_keep_their_mean_diameter() -> None:
     assert plates.ring.diameter == pytest.approx([0.1093, 0.0])
     assert plates.ring.thickness[0] == 0.002
     assert plates_of(stack([built(BOX)]), built(BOX).thickness[None]).ring is None
+
+
+CURVES: dict[str, tuple[str, dict[str, Any], tuple[str, str]]] = {
+    "hot tube": ("rectangular tube", {"formed": "hot"}, ("a", "a")),
+    "cold tube": ("rectangular tube", {"formed": "cold"}, ("c", "c")),
+    "tube": ("rectangular tube", {}, ("c", "c")),
+    "box": ("rectangular tube", {"formed": "welded"}, ("b", "b")),
+    "hot pipe": ("round tube", {"formed": "hot"}, ("a", "a")),
+    "welded pipe": ("round tube", {"formed": "welded"}, ("c", "c")),
+    "tall rolled": ("i section", {"rolled": True}, ("a", "b")),
+    "square rolled": ("i section", {"rolled": True, "flange_width": 170}, ("b", "c")),
+    "tall thick rolled": ("i section", {"rolled": True, "flange_thickness": 41}, ("b", "c")),
+    "square very thick rolled": (
+        "i section", {"rolled": True, "depth": 400, "flange_width": 390, "flange_thickness": 101}, ("d", "d"),
+    ),
+    "welded": ("i section", {}, ("b", "c")),
+    "thick welded": ("i section", {"flange_thickness": 41}, ("c", "d")),
+    "angle": ("angle", {}, ("b", "b")),
+    "pair": ("double angle", {}, ("b", "b")),
+    "channel": ("channel", {}, ("c", "c")),
+    "tee": ("tee", {}, ("c", "c")),
+    "rod": ("round bar", {}, ("c", "c")),
+    "flat": ("flat bar", {}, ("c", "c")),
+    "built up": ("built up", {}, ("c", "c")),
+}  # fmt: skip
+"""EN 1993-1-1, Table 6.2 (from memory): curves about the horizontal and the vertical axis."""
+
+
+@pytest.mark.parametrize("name", CURVES)
+def test_each_shape_has_its_buckling_curves(name: str) -> None:
+    """The curves follow the shape and how it was made, and change places when the section is turned."""
+    shape, changed, curves = CURVES[name]
+    plain = next(one for one in ALL if one.shape == shape)
+    options = {key: changed[key] for key in ("formed", "rolled") if key in changed}
+    sizes = {key.replace("_", " "): mm(size) for key, size in changed.items() if key not in options}
+    one = replace(plain, dimensions={**plain.dimensions, **sizes}, **options)
+    assert built(one).curves == curves
+    assert built(one, 90).curves == curves[::-1]
