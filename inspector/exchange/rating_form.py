@@ -9,7 +9,8 @@ from inspector.exchange.form import Choice, Dimensioned, Form, Number, Text
 from inspector.exchange.record import Key, Need, Record, Tagged
 from models.bridge import Axle, Companion, Imposed, LiveLoad, RatingRules
 from models.loading import LIVE_KINDS
-from models.loading.live import RULES, VEHICLES, KeyForm, LiveKind
+from models.loading.live import VEHICLES, KeyForm, LiveKind
+from models.loading.rules import RULES
 
 NAME: Final = Text(name=True)
 SYSTEMS: Final = Choice(("welded", "riveted", "eyebars", "redundant"))
@@ -23,7 +24,7 @@ _LIVE_FORMS: Final[dict[KeyForm, Form[Any]]] = {
     "force": Dimensioned("force", "not negative"),
     "length": Dimensioned("length", "positive"),
     "axles": Items(_AXLE, least=1),
-    "rule": Choice(RULES),
+    "rule": Choice(tuple(RULES)),
     "vehicle name": Choice(tuple(VEHICLES)),
 }
 _COMPANION: Final = Record(

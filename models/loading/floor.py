@@ -56,6 +56,11 @@ class Floor:
         relieves = ((last - s) ** 2 - (outer - s) ** 2) / (2 * s) if last > s else 0.0
         return hurts, relieves
 
+    def near_width(self) -> float:
+        """Width of the deck on whose people this truss leans, up to the other truss, m: all where there is none."""
+        s = self.spacing
+        return self.width if s is None else min(max(s + self.near, 0.0), self.width)
+
     def mean_share(self) -> float:
         """The part of an even load over the whole width that this truss takes (lever rule)."""
         if self.spacing is None:

@@ -15,6 +15,8 @@ import numpy as np
 from models.bridge import LiveLoad
 from models.calculation import Array
 from models.loading.floor import Floor
+from models.loading.influence import loaded_areas
+from models.loading.rules import RULES, CrowdByArea, CrowdByLength
 from models.quantity import parse
 
 _SAME_PLACE: Final = 1e-9
@@ -35,34 +37,6 @@ class Pattern(Protocol):
         -------
         largest, least : (...) each, N; never below, and never above zero, as a live load may stay away.
         """
-
-
-def loaded_areas(ordinates: Array, panels: Array) -> tuple[Array, Array]:
-    """Areas of the positive and of the negative part of influence lines.
-
-    Parameters
-    ----------
-    ordinates : (..., d); panels : (d - 1,) distances between deck joints, m.
-
-    Returns
-    -------
-    positive, negative : (...), m times the ordinate's unit; the second is negative or zero. Exact at zero
-        crossings inside a panel: a straight line from a to b has the positive area
-        (a+ + b+)^2 / (2 (|a| + |b|)) per unit length, a+ being max(a, 0).
-    """
-    size = np.abs(ordinates)
-    both = size[..., :-1] + size[..., 1:]
-    above = np.maximum(ordinates, 0.0)
-    below = above - ordinates
-
-    def area(part: Array) -> Array:
-        ends = part[..., :-1] + part[..., 1:]
-        # The quotient first: it is at most 1, where the square of a tiny ordinate would vanish.
-        quotient = np.divide(ends, both, out=np.zeros_like(both), where=both > 0.0)
-        areas: Array = (quotient * ends * (panels / 2)).sum(axis=-1)
-        return areas
-
-    return area(above), -area(below)
 
 
 @dataclass(frozen=True, eq=False)
@@ -86,6 +60,15 @@ class Crowd:
             self.hurts * positive - self.relieves * negative,
             self.hurts * negative - self.relieves * positive,
         )
+
+    @property
+    def everywhere(self) -> float:
+        """Line load of people on the whole of the near strip, N/m."""
+        return self.hurts
+
+
+CROWDS: Final = (Crowd, CrowdByLength, CrowdByArea)
+"""What people on the deck become, at a pressure that is given or by rule."""
 
 
 @dataclass(frozen=True, eq=False)
@@ -214,6 +197,8 @@ def axles_of(load: LiveLoad) -> tuple[Array, Array, float]:
 
 
 def _crowd(load: LiveLoad, floor: Floor, x: Array) -> Pattern | None:
+    if load.rule is not None:
+        return RULES[load.rule].crowd(floor, np.diff(x))
     if load.pressure is None:
         return None
     hurts, relieves = floor.strips()
@@ -266,9 +251,6 @@ LIVE_KINDS: Final[Mapping[str, LiveKind]] = {
     "concentrated": LiveKind((("force", "force", True),), (), _concentrated),
     "uniform": LiveKind((("pressure", "pressure", True),), (), _uniform),
 }
-
-RULES: Final = ("en 1991-2", "aashto 1997")
-"""Names of the rules by which a crowd's pressure may be given."""
 
 
 def patterns(loads: tuple[LiveLoad, ...], floor: Floor, x: Array) -> dict[str, Pattern | None]:

@@ -9,7 +9,7 @@ from numpy.typing import NDArray
 
 from models.calculation import Array
 from models.loading.dead import bar_weights, own_weight_on_joints
-from models.loading.live import Crowd
+from models.loading.live import CROWDS
 from models.rating.fitted import Stock
 from models.rating.prepare import PreparedTruss, Standing
 from models.statics.response import Response
@@ -96,7 +96,7 @@ def _without_noise(force: Array, noise: float) -> Array:
 def _displacement(prepared: PreparedTruss, response: Response, dead: Array, flexibility: Array) -> float:
     """Largest elastic displacement of a joint under dead load and a crowd on the whole deck, m (virtual work)."""
     down = dead.copy()
-    crowds = [pattern.hurts for pattern in prepared.patterns.values() if isinstance(pattern, Crowd)]
+    crowds = [pattern.everywhere for pattern in prepared.patterns.values() if isinstance(pattern, CROWDS)]
     down[prepared.geometry.deck] += max(crowds, default=0.0) * prepared.tributary
     forces = -response.forces[:, 1::2] @ down
     finite = np.where(np.isfinite(flexibility), flexibility, 0.0)

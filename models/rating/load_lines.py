@@ -7,6 +7,7 @@ from collections.abc import Iterator
 from models.bridge import Footbridge, LiveLoad
 from models.loading.dead import ASSUMED_CONNECTION_ALLOWANCE
 from models.loading.live import VEHICLES
+from models.loading.rules import RULES
 from models.quantity import Quantity
 from models.resistance.protocol import Basis, FactorLine
 
@@ -46,6 +47,7 @@ def _live(load: LiveLoad) -> FactorLine:
         axles = ", ".join(f"{axle.weight.text} at {axle.position.text}" for axle in load.axles)
         return FactorLine(what, f"{axles}; track {load.track.text if load.track else 'none'}{companions}", _SITE)
     if load.rule is not None:
-        return FactorLine(what, f"by rule {load.rule}: not computed{companions}", _SITE)
+        rule = RULES[load.rule]
+        return FactorLine(what, f"{rule.text}{companions}", rule.source)
     size = load.pressure or load.force
     return FactorLine(what, f"{size.text if size else 'none'}{companions}", _SITE)

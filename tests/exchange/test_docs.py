@@ -11,7 +11,8 @@ import pytest
 from inspector.exchange import site
 from inspector.exchange.identity import NAMESPACE
 from inspector.exchange.schema import result_schema, site_schema
-from models.loading.live import RULES, VEHICLES
+from models.loading.live import VEHICLES
+from models.loading.rules import RULES
 from models.quantity import UNITS
 from models.section.registry import SHAPES
 

@@ -9,7 +9,8 @@ from hypothesis import strategies as st
 from scipy.integrate import trapezoid
 
 from models.calculation import Array
-from models.loading.live import Crowd, Everywhere, Placed, Together, loaded_areas
+from models.loading.influence import loaded_areas
+from models.loading.live import Crowd, Everywhere, Placed, Together
 
 ordinates_and_panels = st.integers(2, 9).flatmap(
     lambda joints: st.tuples(

@@ -9,7 +9,8 @@ from plane.footbridge import metres, quantity
 from models.bridge import Axle, Companion, LiveLoad
 from models.loading import LIVE_KINDS
 from models.loading.floor import Floor
-from models.loading.live import RULES, Crowd, Everywhere, Placed, Together, axles_of, patterns
+from models.loading.live import Crowd, Everywhere, Placed, Together, axles_of, patterns
+from models.loading.rules import RULES, CrowdByArea, CrowdByLength
 
 FLOOR = Floor(2.4, 2.4, 2.8, -0.2)
 X = np.array([0.0, 3.0, 6.0])
@@ -98,12 +99,21 @@ def test_companions_do_not_bring_their_own() -> None:
         assert pattern.extremes(LINE)[0] == pytest.approx(expected)
 
 
-@pytest.mark.parametrize("rule", RULES)
-def test_a_load_that_cannot_be_computed_is_none(rule: str) -> None:
-    """A crowd by a rule that is not built yet is told as such, and so is any load that it accompanies."""
+@pytest.mark.parametrize(("rule", "kind"), [("en 1991-2", CrowdByLength), ("aashto 1997", CrowdByArea)])
+def test_crowd_by_rule(rule: str, kind: type) -> None:
+    """A crowd whose pressure a rule gives is a crowd like any other, alone or beside another load."""
     by_rule = LiveLoad("by rule", "crowd", rule=rule)
     with_it = LiveLoad("with it", "crowd", pressure=CROWD.pressure, companions=(Companion("by rule", 0.4),))
     found = patterns((by_rule, with_it, CROWD), FLOOR, X)
-    assert found["by rule"] is None
-    assert found["with it"] is None
-    assert found["crowd"] is not None
+    alone, crowd, together = found["by rule"], found["crowd"], found["with it"]
+    assert isinstance(alone, kind)
+    assert crowd is not None
+    assert together is not None
+    expected = crowd.extremes(LINE)[0] + 0.4 * alone.extremes(LINE)[0]
+    assert together.extremes(LINE)[0] == pytest.approx(expected)
+
+
+def test_every_rule_names_its_source() -> None:
+    """The rules are those that a site file may name, each with its source."""
+    assert set(RULES) == {"en 1991-2", "aashto 1997"}
+    assert all(rule.source and rule.text for rule in RULES.values())

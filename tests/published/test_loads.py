@@ -6,17 +6,20 @@ import numpy as np
 import pytest
 from plane.build import influence, load_vector, response_of
 from plane.footbridge import footbridge, pratt, quantity
+from published.example import within
 
 from models.bridge import Deck, Footbridge, LiveLoad
 from models.loading.dead import deck_on_joints
 from models.loading.floor import Floor, floor_of
 from models.loading.live import VEHICLES, Crowd, axles_of, patterns
+from models.loading.rules import aashto_pressure, en_pressure
 from models.rating.factor import factored_dead
 from models.resistance.lrfr import LRFR
 from models.statics.geometry import Geometry, geometry_of
 
 KIP = quantity("1 kip", "force").si
 FOOT = quantity("1 ft", "length").si
+PSF = quantity("1 psf", "pressure").si
 CROWD = LiveLoad("crowd", "crowd", pressure=quantity("90 psf", "pressure"))
 
 
@@ -39,6 +42,30 @@ def test_published_vehicles(name: str, weight: float, parts: tuple[float, float]
     assert np.ptp(positions) == pytest.approx(apart, rel=1e-14)
     assert between == pytest.approx(track, rel=1e-14)
     assert VEHICLES[name].source
+
+
+@pytest.mark.parametrize(
+    ("length", "printed"),
+    [
+        (5, "5.0"), (10, "5.0"), (15, "4.667"), (20, "4.4"), (30, "4.0"), (50, "3.5"), (70, "3.2"), (100, "2.923"),
+        (120, "2.8"), (150, "2.667"), (210, "2.5"), (250, "2.5"),
+    ],
+)  # fmt: skip
+def test_pressure_by_loaded_length(length: float, printed: str) -> None:
+    """EN 1991-2, 5.3.2.1(2): 2.0 + 120/(L + 30) kPa, 2.5 at least, 5.0 at most (rule read in two texts; computed)."""
+    assert within(float(en_pressure(np.array(length))) / 1000, printed)
+
+
+@pytest.mark.parametrize(
+    ("area", "printed"),
+    [
+        (100, "85"), (400, "85"), (500, "78.27"), (600, "73.30"), (720, "68.77"), (800, "66.33"), (849.2, "65.0"),
+        (2000, "65.0"),
+    ],
+)  # fmt: skip
+def test_pressure_by_influence_area(area: float, printed: str) -> None:
+    """AASHTO pedestrian guide 1997: 85 psf (0.25 + 15/sqrt(A)), 65 at least, 85 at most (from memory; computed)."""
+    assert within(float(aashto_pressure(np.array(area * FOOT**2))) / PSF, printed)
 
 
 def design_example() -> tuple[Footbridge, Geometry]:
