@@ -195,10 +195,6 @@ def of_bridge(bridge: Footbridge, basis: Basis) -> Iterator[Finding]:
     """What the basis leaves out, keys that are read and kept but that no figure uses yet, and what is not said."""
     for sentence in basis.leaves_out:
         yield Finding("left out", sentence)
-    for load in bridge.rating.live:
-        if load.rule is not None:
-            why = f"the pressure of `{load.name}` by rule is not computed; give a pressure, or rate by hand."
-            yield Finding("not used", sentences.not_used(f"rating/live/{load.name}/rule", why))
     if bridge.rating.imposed:
         why = "settlement, temperature and bars made short enter no figure."
         yield Finding("not used", sentences.not_used("rating/imposed", why))
