@@ -16,7 +16,8 @@ from typing import Final, NamedTuple
 import numpy as np
 from numpy.typing import NDArray
 
-from models.calculation import Array, NoSheet, Number, Sheet, choose, least, root
+from models.calculation import Array, Number, Sheet, choose, least, root
+from models.resistance.plate_rule import area_of_many, area_of_one, named_breadths, thin_of_one, thinness
 from models.resistance.protocol import Member
 from models.section import Plates, Ring, Strip, WrittenPlates
 
@@ -55,94 +56,34 @@ def counted_strength(member: Member, column: Number, sheet: Sheet) -> Counted:
     -------
     The resistance and the part of the area that counts; ``column`` itself and 1 where all of it does.
     """
-    if isinstance(member.plates, WrittenPlates):
-        return _of_one(member, member.plates, column, sheet)
-    return _of_many(member, member.plates, column) if member.plates else Counted(column)
-
-
-def thin_tubes(member: Member, plates: Plates, limit: float) -> NDArray[np.bool_]:
-    """Which members (n,) are round tubes whose diameter over thickness is above limit times E/Fy."""
-    ring = plates.ring
-    if ring is None:
-        return np.zeros(len(member.area), bool)
-    found: NDArray[np.bool_] = ring.diameter + ring.thickness > limit * member.E / member.Fy * ring.thickness
-    there: NDArray[np.bool_] = ring.thickness > 0
-    return found & there
-
-
-def _stress(member: Member, column: Array) -> Array:
-    """Stress (n,) of the gross section under the column's strength, Pa; never quite zero."""
-    found: Array = np.maximum(column / np.where(member.area > 0, member.area, 1.0), _NEGLIGIBLE * member.Fy)
-    return found
-
-
-def _of_many(member: Member, plates: Plates, column: Array) -> Counted:
-    stress = _stress(member, column)
-    thin, tubes = plates.slender(member.E, stress), thin_tubes(member, plates, ROUND_LIMIT)
-    if not thin.any() and not tubes.any():
+    plates = member.plates
+    if isinstance(plates, WrittenPlates):
+        return _of_one(member, plates, column, sheet)
+    area = member.area
+    stress = np.maximum(column / np.where(area > 0, area, 1.0), _NEGLIGIBLE * member.Fy) if plates else column
+    found = area_of_many(AISC, member, plates, stress) if plates else None
+    if found is None:
         return Counted(column)
-    area, where = member.area, np.nonzero(thin)
-    bars, strip = where[0], plates.strip(where)
-    breadth = effective_breadth(strip, member.E[bars], member.Fy[bars], stress[bars], NoSheet())
-    lost = np.bincount(bars, uncounted(strip, breadth), len(area))
-    effective = effective_area(area, lost, plates.table)
-    if plates.ring is not None and tubes.any():
-        ring = Ring(plates.ring.diameter[tubes], plates.ring.thickness[tubes])
-        effective[tubes] = area[tubes] * effective_share(ring, member.E[tubes], member.Fy[tubes], NoSheet())
     # a bar with nothing slender keeps its figure to the last digit, whatever stands beside it
-    reduced = effective < area
-    return Counted(
-        np.where(reduced, stress * effective, column),
-        np.divide(effective, area, np.ones_like(area), where=reduced),
-        thin,
-        thin_tubes(member, plates, ROUND_COVERED),
-    )
+    reduced = found.area < area
+    share = np.divide(found.area, area, np.ones_like(area), where=reduced)
+    return Counted(np.where(reduced, stress * found.area, column), share, found.slender, found.uncovered)
 
 
 def _of_one(member: Member, plates: WrittenPlates, column: Number, sheet: Sheet) -> Counted:
-    if not member.area.value:
-        return Counted(column)
-    E, Fy, stress = member.E.value, member.Fy.value, column.value / member.area.value
-    thin = [strip for strip in plates.strips if strip.thickness.value and _is_slender(strip, E, Fy, stress)]
-    ring = plates.ring if plates.ring and plates.ring.thickness.value else None
-    if ring and float(_thinness(ring)) <= ROUND_LIMIT * E / Fy:
-        ring = None
-    if not thin and not ring:
+    thin = thin_of_one(AISC, member, plates, column.value / member.area.value) if member.area.value else None
+    if thin is None:
         return Counted(column)
     gross = sheet.note(
         "Pcr", column, "force", "nominal resistance of the column, all of its section counting", BREADTHS
     )
     stress = sheet.note("Fcr", gross / member.area, "stress", "its stress", BREADTHS)
-    if ring:
-        effective = member.area * effective_share(ring, member.E, member.Fy, sheet)
-    else:
-        named = [_named(strip, sheet) for strip in thin]
-        lost = [uncounted(one, effective_breadth(one, member.E, member.Fy, stress, sheet)) for one in named]
-        effective = effective_area(member.area, sum(lost[1:], lost[0]), plates.table)
-    source = _ROUND if ring else BREADTHS
-    effective = sheet.note("Ae", effective, "area", "effective area", source)
+    effective = area_of_one(AISC, member, plates, thin, stress, sheet)
     return Counted(stress * effective, effective.value / member.area.value)
-
-
-def _named(strip: Strip, sheet: Sheet) -> Strip:
-    """The strip with lines for what the section's own lines do not give."""
-    kc, free = strip.kc, strip.free
-    if kc is not None:
-        kc = sheet.note(
-            f"kc{strip.number}", kc, "ratio", f"{strip.plates}: factor of a flange welded to its web", _TABLE
-        )
-    if isinstance(free, float):
-        free = sheet.given(f"bf{strip.number}", free, "size", f"{strip.plates}: breadth that is free")
-    breadth = free if isinstance(strip.breadth, float) else strip.breadth
-    return replace(strip, free=free, breadth=breadth, kc=kc)
 
 
 def _limit(strip: Strip, E: Number, Fy: Number) -> Number:
     return strip.limit * root(E / Fy if strip.kc is None else E / Fy * strip.kc)
-
-
-def _is_slender(strip: Strip, E: float, Fy: float, stress: float) -> bool:
-    return bool(float(strip.free / strip.thickness) > float(_limit(strip, E, Fy)) * (Fy / stress) ** 0.5)
 
 
 def effective_breadth(strip: Strip, E: Number, Fy: Number, stress: Number, sheet: Sheet) -> Number:
@@ -173,32 +114,53 @@ def effective_breadth(strip: Strip, E: Number, Fy: Number, stress: Number, sheet
     return sheet.note(f"be{number}", kept, "size", f"{plates}: effective breadth", BREADTHS)
 
 
-def uncounted(strip: Strip, breadth: Number) -> Number:
-    """The area, m^2, that a slender part leaves out when only this breadth, m, of it counts."""
-    lost = (strip.breadth - breadth) * strip.thickness
-    return lost if isinstance(strip.count, int) and strip.count == 1 else strip.count * lost
-
-
-def effective_area(area: Number, lost: Number, table: Number | None) -> Number:
-    """The area that counts, m^2; where a table gives the area, what the plates lose is scaled as all else is."""
-    return area - (lost if table is None else table * lost)
-
-
-def _thinness(ring: Ring) -> Number:
-    return (ring.diameter + ring.thickness) / ring.thickness
-
-
 def effective_share(ring: Ring, E: Number, Fy: Number, sheet: Sheet) -> Number:
     """The part of a round tube that counts.
 
     Beyond 0.45 E/Fy no rule is published; there the last value of the rule falls as the tube gets thinner, as an
     elastic shell's would (common practice, no source), and a finding says so.
     """
-    thinness = sheet.note(
-        f"λ{ring.number}", _thinness(ring), "ratio", "outside diameter over thickness, the mean diameter kept", _ROUND
+    ratio = sheet.note(
+        f"λ{ring.number}", thinness(ring), "ratio", "outside diameter over thickness, the mean diameter kept", _ROUND
     )
-    ruled = least(0.038 * E / (Fy * thinness) + 2 / 3, 1.0)
-    ruled = choose(thinness, "<=", ROUND_LIMIT * E / Fy, 1.0, ruled)
-    beyond = (0.038 / ROUND_COVERED + 2 / 3) * (ROUND_COVERED * E / Fy) / thinness
-    share = choose(thinness, "<=", ROUND_COVERED * E / Fy, ruled, beyond)
+    ruled = least(0.038 * E / (Fy * ratio) + 2 / 3, 1.0)
+    ruled = choose(ratio, "<=", ROUND_LIMIT * E / Fy, 1.0, ruled)
+    beyond = (0.038 / ROUND_COVERED + 2 / 3) * (ROUND_COVERED * E / Fy) / ratio
+    share = choose(ratio, "<=", ROUND_COVERED * E / Fy, ruled, beyond)
     return sheet.note("Ae/A", share, "ratio", "part of the section that counts", _ROUND)
+
+
+class _Aisc:
+    """The rule of AISC 360-22 E7, see `models.resistance.plate_rule.PlateRule`."""
+
+    breadths: Final = BREADTHS
+    round_tubes: Final = _ROUND
+
+    def slender(self, plates: Plates, member: Member, stress: Array) -> NDArray[np.bool_]:
+        return plates.slender(member.E, stress)
+
+    def is_slender(self, strip: Strip, E: float, Fy: float, stress: float) -> bool:
+        return bool(float(strip.free / strip.thickness) > float(_limit(strip, E, Fy)) * (Fy / stress) ** 0.5)
+
+    def named(self, strip: Strip, sheet: Sheet) -> Strip:
+        if strip.kc is None:
+            return named_breadths(strip, sheet)
+        title = f"{strip.plates}: factor of a flange welded to its web"
+        return named_breadths(
+            replace(strip, kc=sheet.note(f"kc{strip.number}", strip.kc, "ratio", title, _TABLE)), sheet
+        )
+
+    def breadth(self, strip: Strip, E: Number, Fy: Number, stress: Number, sheet: Sheet) -> Number:
+        return effective_breadth(strip, E, Fy, stress, sheet)
+
+    def ring_limit(self, E: Number, Fy: Number) -> Number:
+        return ROUND_LIMIT * E / Fy
+
+    def ring_covered(self, E: Number, Fy: Number) -> Number:
+        return ROUND_COVERED * E / Fy
+
+    def ring_share(self, ring: Ring, E: Number, Fy: Number, sheet: Sheet) -> Number:
+        return effective_share(ring, E, Fy, sheet)
+
+
+AISC: Final = _Aisc()

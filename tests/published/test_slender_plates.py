@@ -16,7 +16,8 @@ from section.making import texts
 from models.calculation import NoSheet
 from models.quantity import UNITS
 from models.resistance import LRFR, Member
-from models.resistance.effective import effective_area, effective_breadth, uncounted
+from models.resistance.effective import effective_breadth
+from models.resistance.plate_rule import effective_area, uncounted
 from models.section import Strip, built, plates_of, properties, stack
 
 KSI, KIP, INCH = UNITS["stress"]["ksi"], UNITS["force"]["kip"], UNITS["length"]["in"]

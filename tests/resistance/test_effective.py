@@ -17,7 +17,8 @@ from models.calculation import Array, HandCheck, NoSheet, Step
 from models.formula import in_symbols, reasons
 from models.quantity import parse
 from models.resistance import LRFR, Member, Resistance
-from models.resistance.effective import ROUND_COVERED, ROUND_LIMIT, thin_tubes
+from models.resistance.effective import ROUND_COVERED, ROUND_LIMIT
+from models.resistance.plate_rule import thin_tubes
 from models.section import built, plates_of, properties, stack, write_plates, write_section
 from models.words import Figures
 
@@ -240,8 +241,8 @@ def test_round_tubes_on_both_sides_of_their_limits() -> None:
     assert found.counted[2] == pytest.approx(0.038 / 0.1141 + 2 / 3, rel=1e-9)
     assert found.counted[3:] == pytest.approx([0.75130, 0.75111 * 0.45 / 0.451, 0.75111 / 2], rel=1e-4)
     plates = plates_of(stack([built(CHS)] * 6), thickness)
-    assert thin_tubes(member, plates, ROUND_COVERED).tolist() == [False] * 4 + [True] * 2
-    assert thin_tubes(member, plates, ROUND_LIMIT).tolist() == [False] + [True] * 5
+    assert thin_tubes(plates, ROUND_COVERED * member.E / member.Fy).tolist() == [False] * 4 + [True] * 2
+    assert thin_tubes(plates, ROUND_LIMIT * member.E / member.Fy).tolist() == [False] + [True] * 5
 
 
 @settings(max_examples=150, deadline=None)
