@@ -46,6 +46,7 @@ class Worker:
         self._deliver = deliver
         self._pool = ThreadPoolExecutor(max_workers=1, thread_name_prefix="worker")
         self._asked: Counter[str] = Counter()
+        self._closed = False
 
     def ask(self, job: Callable[[], Result], then: Callable[[Result | Failure], None], topic: str = "") -> None:
         """Do a job, then call ``then`` with its result, or with a `Failure`.
@@ -63,7 +64,7 @@ class Worker:
             return bool(topic) and self._asked[topic] != token
 
         def hand_over(found: Result | Failure) -> None:
-            if not late():
+            if not late() and not self._closed:
                 then(found)
 
         def work() -> None:
@@ -78,8 +79,9 @@ class Worker:
         self._asked[topic] += 1
 
     def close(self) -> None:
-        """Finish what was asked for, then end the thread."""
+        """Finish what was asked for, then end the thread. No answer arrives any more: nobody is there."""
         self._pool.shutdown(wait=True)
+        self._closed = True
 
 
 def outcome_of(job: Callable[[], Result]) -> Result | Failure:

@@ -12,7 +12,7 @@ from collections.abc import Sequence
 import typer
 
 from inspector import PROGRAM, VERSION
-from inspector.cli import check, demo, explain, rate, report
+from inspector.cli import check, demo, explain, field, rate, report
 from inspector.cli.faults import keep_fault
 from models.errors import BasisNotAvailable, InputError, InspectorError
 from models.words import CAUTION, count
@@ -25,7 +25,7 @@ commands = typer.Typer(
     pretty_exceptions_enable=False,
     rich_markup_mode=None,
 )
-for module in (demo, check, rate, explain, report):
+for module in (demo, check, rate, explain, report, field):
     module.register(commands)
 
 

@@ -57,20 +57,30 @@ def test_only_the_last_answer_on_a_topic_arrives(desk: Desk) -> None:
     desk.worker.ask(lambda: begun.append("second"), desk.found.append, "rating")
     desk.worker.ask(lambda: "third", desk.found.append, "rating")
     gate.set()
-    desk.worker.close()
-    while not desk.calls.empty():
+    desk.worker.ask(lambda: "end", desk.found.append)
+    while "end" not in desk.found:
         desk.take()
     assert begun == []
-    assert desk.found == ["third"]
+    assert desk.found == ["third", "end"]
 
 
 def test_a_forgotten_topic_stays_silent(desk: Desk) -> None:
     """What nobody waits for any more does not arrive."""
     desk.worker.ask(lambda: "late", desk.found.append, "figures")
     desk.worker.forget("figures")
-    desk.worker.close()
-    while not desk.calls.empty():
+    desk.worker.ask(lambda: "end", desk.found.append)
+    while "end" not in desk.found:
         desk.take()
+    assert desk.found == ["end"]
+
+
+def test_what_was_asked_for_is_finished_at_the_end_and_no_answer_arrives_after(desk: Desk) -> None:
+    """An entry that was tapped is stored although the app is being closed; no screen is there to hear of it."""
+    done: list[str] = []
+    desk.worker.ask(lambda: done.append("stored"), desk.found.append)
+    desk.worker.close()
+    desk.take()
+    assert done == ["stored"]
     assert desk.found == []
 
 

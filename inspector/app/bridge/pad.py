@@ -8,6 +8,7 @@ from typing import Final, Literal
 from models import words
 from models.errors import QuantityError
 from models.journal import Reading
+from models.picture import Picture
 from models.quantity import Quantity, parse
 from models.words import Figures
 
@@ -36,6 +37,7 @@ class Pad:
     values : what was stored already at this spot, as typed.
     question : what to answer by entering the same number again.
     error : why what was typed cannot be stored.
+    section : the section with this plate marked.
     """
 
     plate: str
@@ -52,6 +54,7 @@ class Pad:
     values: tuple[str, ...] = ()
     question: str = ""
     error: str = ""
+    section: Picture | None = None
 
     @property
     def unit(self) -> str:

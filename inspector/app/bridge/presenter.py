@@ -2,7 +2,6 @@
 
 from __future__ import annotations
 
-from models.words import entries
 from collections.abc import Callable
 from dataclasses import dataclass, field, replace
 from typing import Any
@@ -10,7 +9,7 @@ from typing import Any
 from inspector.app.bridge.drawing import Wanted, draw, draw_again
 from inspector.app.bridge.pad import Pad
 from inspector.app.bridge.sheet import governs_text, sheet_of
-from inspector.app.bridge.state import BridgeState, Choice, Walk
+from inspector.app.bridge.state import OTHER, BridgeState, Choice, Walk
 from inspector.app.shelf import Shelf, Today, today_in
 from inspector.app.worker import Failure, Work
 from inspector.desk import Rated
@@ -18,10 +17,12 @@ from inspector.visit import Logbook
 from models import words
 from models.journal import Entry, Reading
 from models.picture import Picture
+from models.picture.section import section_picture
 from models.picture.views import VIEWS
 from models.rating.result import Rating
 from models.section import built
 from models.walk import Place, done_in, walking_order
+from models.words import entries
 
 RATING = "rating"
 DRAWING = "drawing"
@@ -88,6 +89,10 @@ class BridgePresenter:
         self.state = BridgeState()
         self._refresh()
         self._draw()
+
+    def close(self) -> None:
+        """Nothing is asked for any more."""
+        self._open = None
 
     def letters_across(self, number: float) -> None:
         """How many letters fit into the drawing's width; another number lays the drawing out anew."""
@@ -178,11 +183,11 @@ class BridgePresenter:
             return None
         rated, (truss, bar) = self._open.rated, self._open.place
         as_built = rated.bridge.trusses[truss].bar[bar]
-        section = rated.condition.bars[truss, bar].section
-        cut = built(rated.bridge.sections[section], as_built.turned or 0)
+        cut = built(rated.bridge.sections[rated.condition.bars[truss, bar].section], as_built.turned or 0)
         row = next(row for row in rated.rating.trusses[truss].bars if row.bar == bar)
         nominal = float(cut.thickness[cut.plates.index(plate)])
-        return Pad(plate, nominal, as_built.start, as_built.end, row.length, rated.bridge.units or "SI")
+        units, section = rated.bridge.units or "SI", section_picture(cut, chosen=plate)
+        return Pad(plate, nominal, as_built.start, as_built.end, row.length, units, section=section)
 
     def _book(self) -> Logbook:
         return self._shelf.logbook(self._opened.rated.bridge.id)
@@ -294,7 +299,9 @@ class BridgePresenter:
             structure=f"{then} → {structure}" if changed else structure,
             structure_changed=changed,
             act_now=act_now_lines(rated),
-            trusses=tuple(Choice(name, name, chosen=name == truss) for name in rated.bridge.trusses),
+            other_trusses=tuple(
+                Choice(f"{OTHER}{name}", f"Show {name}") for name in rated.bridge.trusses if name != truss
+            ),
             views=tuple(Choice(name, name.capitalize(), chosen=name == now.view) for name in VIEWS),
             truss=truss,
             bar=now.place[1],

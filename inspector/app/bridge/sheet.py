@@ -2,7 +2,6 @@
 
 from __future__ import annotations
 
-from models.words import entries
 from collections.abc import Callable, Iterable, Sequence
 from typing import Final, TypeVar
 
@@ -15,10 +14,11 @@ from models.finding import Finding
 from models.journal import Entry
 from models.journal_order import NOTHING_RECORDED, Placed
 from models.picture.section import section_picture
+from models.picture.views import GONE
 from models.rating import bar_of
 from models.rating.result import BarRating
 from models.section import Built, built
-from models.words import Figures
+from models.words import Figures, entries
 
 HANDS_ON: Final = "hands on"
 AT_A_DISTANCE: Final = "at a distance"
@@ -82,7 +82,7 @@ def _about_bar(rated: Rated, place: tuple[str, str]) -> Iterable[Finding]:
 
 def factor_text(bar: BarRating, level: str) -> str:
     """A bar's rating factor as people read it; whether it is below 1 is said in words."""
-    if bar.check in ("severed", "cracked"):
+    if bar.check in GONE:
         return str(bar.check)
     value = bar.rating_factor.get(level)
     if value is None:
@@ -94,6 +94,8 @@ def governs_text(check: str | None, load: str | None) -> str:
     """What governs, in a line."""
     if check is None:
         return "nothing governs"
+    if check in GONE:
+        return "no credit is given to it"
     return f"{check}, {load or 'dead load alone'}"
 
 

@@ -6,6 +6,9 @@ from dataclasses import dataclass
 
 from models.picture import Picture
 
+OTHER = "truss "
+"""Stands before a truss's name where it is the key of a choice beside others."""
+
 
 @dataclass(frozen=True, slots=True)
 class Choice:
@@ -97,7 +100,7 @@ class BridgeState:
     structure: str = ""
     structure_changed: bool = False
     act_now: tuple[str, ...] = ()
-    trusses: tuple[Choice, ...] = ()
+    other_trusses: tuple[Choice, ...] = ()
     views: tuple[Choice, ...] = ()
     truss: str = ""
     bar: str = ""
