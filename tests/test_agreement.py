@@ -49,6 +49,7 @@ TENTH = (
     "replaced",
     "never visited",
     "crowd",
+    "crowd by rule",
     "vehicle",
     "vehicle by name",
     "SI units",

@@ -14,6 +14,7 @@ from independent.units import GRAVITY, si
 
 JSON = dict[str, Any]
 NEAR = 1e-9  # m: two places that are one
+LEVELS = 300  # of worth, tried before the search is made finer
 
 NAMED = {
     "H5": {"axles": [["0 ft", "2 kip"], ["14 ft", "8 kip"]], "track": "6 ft"},
@@ -49,6 +50,10 @@ class Across:
         press = area(self.near, press_to) if press_to > self.near else 0.0
         lift = -area(lift_from, self.far) if self.far > lift_from else 0.0
         return press, lift
+
+    def strip(self) -> float:
+        """Return the width (m) of deck that presses on the truss."""
+        return self.width if self.alone else max(0.0, min(self.far, self.spacing) - self.near)
 
     def wheels(self, track: float) -> tuple[float, float]:
         """Return the greatest and the least share of an axle, its outer wheel at the near and at the far kerb."""
@@ -110,10 +115,93 @@ def parts(stations: list[float], ordinates: list[float]) -> tuple[float, float]:
 
 def crowd(load: JSON, across: Across, stations: list[float], ordinates: list[float]) -> tuple[float, float]:
     """Return the greatest and the least force (N) of a bar under people where they hurt."""
+    if "rule" in load:
+        return RULES[load["rule"]](across, stations, ordinates)
     pressure = si(load["pressure"])
     press, lift = across.strips()
     above, below = parts(stations, ordinates)
     return pressure * (press * above - lift * below), pressure * (press * below - lift * above)
+
+
+def pieces(stations: list[float], ordinates: list[float], press: float, lift: float) -> np.ndarray:
+    """Return straight pieces of one sign: length, and what a metre of people is worth at the lower and higher end."""
+    found = []
+    for x1, x2, y1, y2 in zip(stations, stations[1:], ordinates, ordinates[1:], strict=False):
+        zero = y1 / (y1 - y2) if y1 * y2 < 0 else 1.0
+        for part, ends in ((zero, (y1, 0.0 if zero < 1 else y2)), (1.0 - zero, (0.0, y2))):
+            worth = sorted(press * y if y > 0 else -lift * y for y in ends)
+            found.append((part * (x2 - x1), *worth))
+    return np.array(found)
+
+
+def en(length: np.ndarray) -> np.ndarray:
+    """Return the pressure (Pa) by loaded length."""
+    return np.clip(2e3 + 120e3 / (length + 30), 2.5e3, 5e3)
+
+
+def over(own: np.ndarray, levels: np.ndarray) -> np.ndarray:
+    """Return the force of people wherever they are worth more than each of some levels."""
+    length, low, high = own.T[:, :, None]
+    rise = np.maximum(high - low, 1e-300)
+    covered = length * np.clip((high - levels) / rise, 0.0, 1.0)
+    mean = (high + np.maximum(low, levels)) / 2
+    return en(covered.sum(axis=0)) * (covered * mean).sum(axis=0)
+
+
+def ten_metres(own: np.ndarray) -> float:
+    """Return the force of people on the worst ten metres, up to which the pressure stays at its greatest."""
+    length, low, high = own.T
+    levels = np.sort(np.append(own[:, 1:].ravel(), 0.0))[::-1]
+    for level in levels:
+        on_it = (low == high) & (high == level)
+        part = np.clip((high - level) / np.where(high > low, high - low, 1.0), 0.0, 1.0)
+        covered = float((length * part).sum())
+        if covered <= 10.0 <= covered + length[on_it].sum():
+            force = float((length * part * (high + np.maximum(low, level)) / 2).sum())
+            return en(np.array(10.0)) * (force + level * (10.0 - covered))
+    return 0.0
+
+
+def by_length(across: Across, stations: list[float], ordinates: list[float]) -> tuple[float, float]:
+    """Return the greatest and the least force under 2 + 120/(L + 30) kPa: many levels, the best ones finer."""
+
+    def worst(line: list[float]) -> float:
+        own = pieces(stations, line, *across.strips())
+        levels = np.unique(np.concatenate([np.linspace(0.0, own[:, 1:].max(), LEVELS), own[:, 1:].ravel()]))
+        force = over(own, levels)
+        best = [ten_metres(own), float(force.max())]
+        for peak in np.argsort(-force)[:3]:
+            low, high = levels[max(peak - 1, 0)], levels[min(peak + 1, len(levels) - 1)]
+            for _ in range(4):
+                fine = np.linspace(low, high, 33)
+                force_there = over(own, fine)
+                top = int(np.argmax(force_there))
+                low, high = fine[max(top - 1, 0)], fine[min(top + 1, 32)]
+                best.append(float(force_there[top]))
+        return max(best)
+
+    return worst(ordinates), -worst([-y for y in ordinates])
+
+
+def by_area(across: Across, stations: list[float], ordinates: list[float]) -> tuple[float, float]:
+    """Return the greatest and the least force under 85 psf (0.25 + 15/sqrt(ft^2)), 65 to 85, on what presses."""
+    press, lift = across.strips()
+    above, below = parts(stations, ordinates)
+    felt = 1e-9 * max(abs(y) for y in ordinates)
+
+    def pressure(sign: int) -> float:
+        length = 0.0
+        for x1, x2, y1, y2 in zip(stations, stations[1:], ordinates, ordinates[1:], strict=False):
+            ends = [sign * y if abs(y) > felt else 0.0 for y in (y1, y2)]
+            if max(ends) > 0:
+                length += (x2 - x1) * (1.0 if min(ends) >= 0 else max(ends) / (max(ends) - min(ends)))
+        feet = across.strip() * length / si("1 ft") ** 2
+        return si("1 psf") * min(85.0, max(65.0, 85 * (0.25 + 15 / math.sqrt(feet)) if feet > 0 else 85.0))
+
+    return pressure(1) * (press * above - lift * below), pressure(-1) * (press * below - lift * above)
+
+
+RULES = {"en 1991-2": by_length, "aashto 1997": by_area}
 
 
 def floor(stations: list[float], x: float, side: int) -> list[float]:

@@ -157,6 +157,13 @@ def _live(choices: Choices, labels: set[str], writer: Writer) -> list[JSON]:
     return loads
 
 
+def _by_rule(choices: Choices, live: list[JSON], labels: set[str]) -> None:
+    """Let a rule give the pressure of a crowd."""
+    rule = choices.pick(("en 1991-2", "aashto 1997"))
+    live.append({"name": "people", "kind": "crowd", "rule": rule})
+    labels |= {"crowd by rule", rule}
+
+
 def make(choices: Choices) -> Labelled:
     """Make one document."""
     labels: set[str] = set()
@@ -205,6 +212,8 @@ def make(choices: Choices) -> Labelled:
     document["sections"] = {
         name: section for name, section in document["sections"].items() if name in used | visits.named(document)
     }
+    if choices.chance(0.15):
+        _by_rule(choices, document["rating"]["live"], labels)
     return document, frozenset(labels)
 
 
