@@ -25,14 +25,21 @@ def elastic_critical_load(member: Member) -> Number:
     The lesser eigenvalue of pi^2 E [[Ih/Li^2, Ihv/(Li Lo)], [Ihv/(Li Lo), Iv/Lo^2]] with effective lengths Li in
     the plane of the truss and Lo out of it. Exact where Li = Lo or Ihv = 0; elsewhere a safe lower bound.
     """
+    in_plane, out_of_plane = critical_loads(member)
     inside, outside = member.effective_length_in_plane, member.effective_length_out_of_plane
-    scale = math.pi**2 * member.E
-    in_plane = scale * member.inertia_horizontal / inside**2
-    out_of_plane = scale * member.inertia_vertical / outside**2
-    coupling = scale * member.inertia_product / (inside * outside)
+    coupling = math.pi**2 * member.E * member.inertia_product / (inside * outside)
     if isinstance(coupling, Traced) and not coupling.value:
         return least(in_plane, out_of_plane)
     return (in_plane + out_of_plane) / 2 - root(((in_plane - out_of_plane) / 2) ** 2 + coupling**2)
+
+
+def critical_loads(member: Member) -> tuple[Number, Number]:
+    """The elastic critical loads in the plane of the truss and out of it, N, as if neither took part in the other."""
+    scale = math.pi**2 * member.E
+    return (
+        scale * member.inertia_horizontal / member.effective_length_in_plane**2,
+        scale * member.inertia_vertical / member.effective_length_out_of_plane**2,
+    )
 
 
 def column_strength(yield_load: Number, critical_load: Number) -> Number:

@@ -8,13 +8,16 @@ from typing import Final
 
 from models.errors import BasisNotAvailable
 from models.resistance.allowable import ALLOWABLE_STRESS
+from models.resistance.eurocode import EUROCODE
 from models.resistance.lrfr import LRFR
 from models.resistance.protocol import Basis
 
 NAMES: Final = ("lrfr", "allowable stress", "eurocode")
 """The bases that a site file may name, built or not."""
 
-BASES: Final[Mapping[str, Basis]] = MappingProxyType({basis.name: basis for basis in (LRFR, ALLOWABLE_STRESS)})
+BASES: Final[Mapping[str, Basis]] = MappingProxyType(
+    {basis.name: basis for basis in (LRFR, ALLOWABLE_STRESS, EUROCODE)}
+)
 
 
 def basis(name: str) -> Basis:

@@ -49,7 +49,7 @@ HICKS = {
 
 @pytest.mark.parametrize("Fy", HICKS)
 def test_printed_formulas(Fy: float) -> None:
-    """Below Cc the allowable stress is the printed parabola, to the last digit of its numbers (0.00333 is cut off, not rounded); beyond, 135,000/s^2."""
+    """Below Cc the stress is the printed parabola to its last digit (0.00333 is cut off), beyond 135,000/s^2."""
     limit, a, b = HICKS[Fy]
     for s in (1.0, 20.0, 40.0, 60.0, 70.0):
         assert stresses(s, Fy)[0] == pytest.approx(a - b * s**2, abs=0.006 + 0.00001 * s**2)
