@@ -15,7 +15,7 @@ from inspector.app.room import GAP, LARGE_TARGET, key_columns
 from inspector.app.widgets.choices import offer
 from inspector.app.widgets.push import Key
 
-_SIGNS = {ERASE: "⌫", SPACE: "space"}
+_SIGNS = {ERASE: "⌫", SPACE: "␣"}
 
 
 class Keys(Layout):

@@ -40,16 +40,20 @@ class Scroller(Layout):
         if self._content is None or self.width < 1:
             return
         needed = self._content.height_for(self.width) > self.height
-        side = dp(TARGET + GAP) if needed else 0
+        target, gap = dp(TARGET), dp(GAP)
+        low = self.height < 2 * target + gap
+        side = 0 if not needed else 2 * (target + gap) if low else target + gap
         view, up, down = self.ids.view, self.ids.up, self.ids.down
         view.pos, view.size = self.pos, (self.width - side, self.height)
         self._content.size_hint_x = None
-        self._content.width = view.width - (dp(GAP) if needed else 0)
-        each = (self.height - dp(GAP)) / 2
-        for button, low in ((up, self.top - each), (down, self.y)):
+        self._content.width = view.width - (gap if needed else 0)
+        # Where the room is low they stand side by side, else one over the other.
+        each = self.height if low else (self.height - gap) / 2
+        up_at = (self.right - 2 * target - gap, self.y) if low else (self.right - target, self.top - each)
+        for button, at in ((up, up_at), (down, (self.right - target, self.y))):
             button.disabled, button.opacity = not needed, float(needed)
-            button.pos = (self.right - dp(TARGET), low) if needed else (self.right, low)
-            button.size = (dp(TARGET), each) if needed else (0, 0)
+            button.pos = at if needed else (self.right, self.y)
+            button.size = (target, each) if needed else (0, 0)
 
     def scroll(self, pages: float) -> None:
         """Move by parts of what is in sight; down is positive."""
