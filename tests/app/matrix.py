@@ -1,7 +1,4 @@
-"""The screens in every size and text size of a density. Run by a test, in a process of its own for each density:
-
-python tests/app/matrix.py 1.5 2000x1200
-"""
+"""The screens in every size and text size: ``python tests/app/matrix.py DENSITY`` walks those of a density."""
 
 from __future__ import annotations
 
