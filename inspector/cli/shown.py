@@ -155,7 +155,8 @@ def hand_check_of(out: Console, rated: Rated, check: BarCheck) -> None:
             out.print(Text(f"  {reason}"))
         if formula.is_computed(step):
             out.print(Text(f"  {step.symbol} = {formula.in_symbols(step)}"))
-            out.print(Text(f"  {' ' * len(step.symbol)} = {formula.in_numbers(step, figures)}"))
+            if formula.in_numbers(step, figures) != formula.result(step, figures):
+                out.print(Text(f"  {' ' * len(step.symbol)} = {formula.in_numbers(step, figures)}"))
             out.print(Text(f"  {' ' * len(step.symbol)} = {formula.result(step, figures)}", style="bold"))
         else:
             out.print(Text(f"  {step.symbol} = {formula.result(step, figures)}"))

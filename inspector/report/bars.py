@@ -44,17 +44,24 @@ def _table(
     width: float,
 ) -> Flowable:  # fmt: skip
     force, area = figures.unit("force"), figures.unit("area")
+    lower = tuple(dict.fromkeys(level for bar in rated.bars for level in bar.lower_levels))
+    named = [f" {level}" for level in (*lower, rating.upper_level)] if lower else [""]
+    resisted = [f"{what}{level} {force}" for level in named for what in ("tension", "compr.")]
     head = (
         "no.", "bar", "section", "state", "known", f"area {area}", "kept", f"dead DC {force}",
-        f"dead DW {force}", f"live max {force}", f"live min {force}", f"tension {force}", f"compr. {force}", "check",
+        f"dead DW {force}", f"live max {force}", f"live min {force}", *resisted, "check",
         "load", "D/C", *(f"RF {level}" for level in rating.levels), f"margin {force}", "may lose", "without it",
         "see",
     )  # fmt: skip
     levels = len(rating.levels)
-    shares = (14, 35, 43, 26, 56, 29, 24, 28, 29, 28, 28, 30, 29, 66, 31, 27, *(39,) * levels, 28, 23, 43, 30)
-    align = "r" + "llll" + "rrrrrrrr" + "ll" + "r" * (levels + 4) + "l"
+    shares = (
+        *((17, 35, 43, 26, 44, 28, 29) if lower else (14, 35, 43, 26, 56, 29, 24)), 28, 29, 28, 28,
+        *((40.5,) * len(resisted) if lower else (30, 29)), 62 if lower else 66, 31, 30 if lower else 27,
+        *(40.5 if lower else 39,) * levels, 31 if lower else 28, 23, 46 if lower else 43, 30,
+    )  # fmt: skip
+    align = "r" + "llll" + "rrrrrr" + "r" * len(resisted) + "ll" + "r" * (levels + 4) + "l"
     rows = [
-        (number, *_bar(bar, rating, figures), marks.get((bar.truss, bar.bar), ""))
+        (number, *_bar(bar, rating, figures, lower), marks.get((bar.truss, bar.bar), ""))
         for number, bar in enumerate(rated.bars, 1)
     ]
     low = [number for number, bar in enumerate(rated.bars) if _below_one(bar, rating.upper_level)]
@@ -66,7 +73,7 @@ def _below_one(bar: BarRating, level: str) -> bool:
     return value is not None and value < 1
 
 
-def _bar(bar: BarRating, rating: Rating, figures: Figures) -> tuple[str, ...]:
+def _bar(bar: BarRating, rating: Rating, figures: Figures, lower: tuple[str, ...]) -> tuple[str, ...]:
     live = governing_live(bar)
     area = figures.number(bar.area, "area", 4)
     return (
@@ -74,6 +81,7 @@ def _bar(bar: BarRating, rating: Rating, figures: Figures) -> tuple[str, ...]:
         words.percent(bar.area / bar.nominal_area if bar.nominal_area else None),
         number(bar.dead_components, figures), number(bar.dead_wearing, figures),
         number(live.maximum if live else None, figures), number(live.minimum if live else None, figures),
+        *(number(value, figures) for level in lower for value in bar.lower_levels[level]),
         number(bar.tension, figures), number(bar.compression, figures), bar.check or "none", bar.load or "none",
         "none" if bar.demand_over_capacity is None else words.significant(bar.demand_over_capacity),
         *(_factor(bar, rating, level) for level in rating.levels), number(bar.margin, figures),

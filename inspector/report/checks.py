@@ -52,7 +52,7 @@ def _line(step: Step, figures: Figures) -> Paragraph:
         return Paragraph(f"<b>{markup(step.symbol)}</b> = <b>{result}</b>", CELL)
     symbols, numbers = formula.in_symbols(step), formula.in_numbers(step, figures)
     rows = [f"<b>{markup(step.symbol)}</b> = {markup(symbols)}"]
-    if numbers != symbols:
+    if numbers not in (symbols, formula.result(step, figures)):
         rows.append(f"&nbsp;&nbsp;= {markup(numbers)}")
     rows[-1] += f" = <b>{result}</b>"
     rows += [f"&nbsp;&nbsp;as {markup(reason)}" for reason in formula.reasons(step, figures)]

@@ -74,13 +74,34 @@ def _by_edge(strip: Strip, name: str) -> Number:
     return np.where(strip.held, both, one) if isinstance(strip.held, np.ndarray) else both if strip.held else one
 
 
-class _European:
-    """The rule, see `models.resistance.plate_rule.PlateRule`; whatever the stress, it takes Fy."""
+@dataclass(frozen=True, eq=False)
+class European:
+    """The rule, see `models.resistance.plate_rule.PlateRule`; whatever the stress, it takes Fy.
 
-    breadths: Final = WIDTHS
-    round_tubes: Final = _TUBES
+    Parameters
+    ----------
+    eps : epsilon where it has a line of its own already, as in a hand check; None to work it out.
+    """
+
+    eps: Number | None = None
+
+    @property
+    def breadths(self) -> str:
+        """See `PlateRule`."""
+        return WIDTHS
+
+    @property
+    def round_tubes(self) -> str:
+        """See `PlateRule`."""
+        return _TUBES
+
+    def noted(self, member: Member, sheet: Sheet) -> European:
+        """The rule with a line for epsilon."""
+        title = "root of 235 MPa over Fy, times E over 210 GPa"
+        return European(sheet.note("ε", epsilon(member.E, member.Fy), "ratio", title, _EPSILON))
 
     def slender(self, plates: Plates, member: Member, stress: Array) -> NDArray[np.bool_]:
+        """See `PlateRule`."""
         sizes, eps = plates.parts.sizes, epsilon(member.E, member.Fy)
         held = sizes[..., 5] > 0
         reach = np.where(held, INTERNAL.limit * INTERNAL.buckling**0.5, OUTSTAND.limit * OUTSTAND.buckling**0.5) * (
@@ -90,31 +111,40 @@ class _European:
         return found
 
     def is_slender(self, strip: Strip, E: float, Fy: float, stress: float) -> bool:
+        """See `PlateRule`."""
         edge = INTERNAL if strip.held else OUTSTAND
         ratio = float(strip.free / strip.thickness)
         return ratio > float(edge.limit * edge.buckling**0.5 * 28.4 * epsilon(E, Fy))
 
     def named(self, strip: Strip, sheet: Sheet) -> Strip:
+        """See `PlateRule`."""
         return named_breadths(strip, sheet)
 
     def breadth(self, strip: Strip, E: Number, Fy: Number, stress: Number, sheet: Sheet) -> Number:
-        title = "root of 235 MPa over Fy, times E over 210 GPa"
-        eps = sheet.note(f"ε{strip.number}", epsilon(E, Fy), "ratio", title, _EPSILON)
-        return effective_width(strip, eps, sheet)
+        """See `PlateRule`."""
+        return effective_width(strip, self._epsilon(E, Fy), sheet)
 
     def ring_limit(self, E: Number, Fy: Number) -> Number:
+        """See `PlateRule`."""
         return ROUND_LIMIT * epsilon(E, Fy) ** 2
 
     def ring_covered(self, E: Number, Fy: Number) -> Number:
+        """See `PlateRule`."""
         return self.ring_limit(E, Fy)
 
     def ring_share(self, ring: Ring, E: Number, Fy: Number, sheet: Sheet) -> Number:
         """Falls as the tube gets thinner beyond the limit (common practice, no source); a finding says so."""
         ratio = sheet.note(f"λ{ring.number}", thinness(ring), "ratio", "outside diameter over thickness", _TUBES)
-        eps = sheet.note(f"ε{ring.number}", epsilon(E, Fy), "ratio", "epsilon", _EPSILON)
         return sheet.note(
-            "Ae/A", ROUND_LIMIT * eps**2 / ratio, "ratio", "part that counts (common practice, no source)", _TUBES
+            "Ae/A",
+            ROUND_LIMIT * self._epsilon(E, Fy) ** 2 / ratio,
+            "ratio",
+            "part that counts (common practice, no source)",
+            _TUBES,
         )
 
+    def _epsilon(self, E: Number, Fy: Number) -> Number:
+        return epsilon(E, Fy) if self.eps is None else self.eps
 
-EUROPEAN: Final = _European()
+
+EUROPEAN: Final = European()

@@ -184,7 +184,7 @@ def _effective(member: Member, sheet: Sheet) -> tuple[Number, ...]:
         thin = thin_of_one(EUROPEAN, member, plates, member.Fy.value)
         if thin is None:
             return (area,)
-        effective = area_of_one(EUROPEAN, member, plates, thin, member.Fy, sheet)
+        effective = area_of_one(EUROPEAN.noted(member, sheet), member, plates, thin, member.Fy, sheet)
         return effective, effective.value / area.value
     found = area_of_many(EUROPEAN, member, plates, member.Fy) if plates else None
     if found is None:
