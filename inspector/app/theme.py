@@ -25,83 +25,86 @@ class Roles:
 
     Parameters
     ----------
-    surface, on_surface : the ground of a screen and its text; ``quiet`` is text of less weight on it.
+    surface, ink : the ground of a screen and its text; ``quiet`` is text of less weight on it.
     card : the ground of drawings and sheets, with the same text.
-    button, on_button, outline : a button that is not chosen, its text, and the outline of everything touched.
-    chosen, on_chosen : a button that is chosen.
-    off, on_off : a button that cannot be used now.
-    caution, on_caution : the banner.
-    act, on_act : findings that need somebody to act now.
-    changed, on_changed : figures that the last entry changed.
+    button, button_ink, outline : a button that is not chosen, its text, and the outline of everything touched.
+    chosen, chosen_ink : a button that is chosen.
+    off, off_ink : a button that cannot be used now.
+    caution, caution_ink : the banner.
+    act, act_ink : findings that need somebody to act now.
+    changed, changed_ink : figures that the last entry changed.
+    bar_mark : the outline of the chosen bar. clear : nothing at all.
     """
 
     surface: Colour
-    on_surface: Colour
+    ink: Colour
     quiet: Colour
     card: Colour
     button: Colour
-    on_button: Colour
+    button_ink: Colour
     outline: Colour
     chosen: Colour
-    on_chosen: Colour
+    chosen_ink: Colour
     off: Colour
-    on_off: Colour
+    off_ink: Colour
     caution: Colour
-    on_caution: Colour
+    caution_ink: Colour
     act: Colour
-    on_act: Colour
+    act_ink: Colour
     changed: Colour
-    on_changed: Colour
+    changed_ink: Colour
     bar_mark: Colour
+    clear: Colour = (0.0, 0.0, 0.0, 0.0)
 
 
 FIELD: Final = Roles(
     surface=_colour("E7ECEA"),
-    on_surface=_colour("14201F"),
+    ink=_colour("14201F"),
     quiet=_colour("33413F"),
     card=_colour("FFFFFF"),
     button=_colour("F7FAF8"),
-    on_button=_colour("14201F"),
+    button_ink=_colour("14201F"),
     outline=_colour("35504C"),
     chosen=_colour("134E4A"),
-    on_chosen=_colour("FFFFFF"),
+    chosen_ink=_colour("FFFFFF"),
     off=_colour("DDE3E1"),
-    on_off=_colour("4A5553"),
+    off_ink=_colour("4A5553"),
     caution=_colour("F0E442"),
-    on_caution=_colour("14201F"),
+    caution_ink=_colour("14201F"),
     act=_colour("7A1F00"),
-    on_act=_colour("FFFFFF"),
+    act_ink=_colour("FFFFFF"),
     changed=_colour("F0E442"),
-    on_changed=_colour("14201F"),
+    changed_ink=_colour("14201F"),
     bar_mark=_colour("134E4A"),
 )
 
 SUN: Final = Roles(
     surface=_colour("FFFFFF"),
-    on_surface=_colour("000000"),
+    ink=_colour("000000"),
     quiet=_colour("000000"),
     card=_colour("FFFFFF"),
     button=_colour("FFFFFF"),
-    on_button=_colour("000000"),
+    button_ink=_colour("000000"),
     outline=_colour("000000"),
     chosen=_colour("000000"),
-    on_chosen=_colour("FFFFFF"),
+    chosen_ink=_colour("FFFFFF"),
     off=_colour("FFFFFF"),
-    on_off=_colour("3D3D3D"),
+    off_ink=_colour("3D3D3D"),
     caution=_colour("F0E442"),
-    on_caution=_colour("000000"),
+    caution_ink=_colour("000000"),
     act=_colour("5C1700"),
-    on_act=_colour("FFFFFF"),
+    act_ink=_colour("FFFFFF"),
     changed=_colour("F0E442"),
-    on_changed=_colour("000000"),
+    changed_ink=_colour("000000"),
     bar_mark=_colour("000000"),
 )
 
 THEMES: Final[Mapping[str, Roles]] = {"field": FIELD, "sun": SUN}
 
 TEXT_ON: Final = (
-    ("on_surface", "surface"), ("quiet", "surface"), ("on_surface", "card"), ("quiet", "card"), ("on_button", "button"),
-    ("on_chosen", "chosen"), ("on_off", "off"), ("on_caution", "caution"), ("on_act", "act"), ("on_changed", "changed"),
+    ("ink", "surface"), ("quiet", "surface"), ("ink", "card"), ("quiet", "card"), ("button_ink", "button"),
+    ("chosen_ink", "chosen"), ("off_ink", "off"), ("caution_ink", "caution"), ("act_ink", "act"),
+    ("changed_ink", "changed"),
 )  # fmt: skip
 """Every pair of a text and its ground that a screen uses."""
 

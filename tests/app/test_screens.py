@@ -9,6 +9,7 @@ import pytest
 from app.desk_without_screen import SAMPLE, sample
 
 from inspector import samples
+from inspector.app.theme import THEMES
 from models.words import CAUTION
 
 Drive = Callable[..., Any]
@@ -356,7 +357,7 @@ def test_theme_and_text_size_change_at_once_and_stay(drive: Drive) -> None:
     d.push("Sun screen")
     d.push("Text 100 %")
     d.frames(3)
-    assert tuple(d.app.theme.on_surface) == (0, 0, 0, 1)
+    assert tuple(d.button("Ellerwick").color) == THEMES["sun"].button_ink
     assert d.button("Ellerwick").font_size == pytest.approx(1.5 * before)
     again = drive()
     again.settled()

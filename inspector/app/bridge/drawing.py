@@ -9,6 +9,8 @@ from models.picture import Picture
 from models.picture.elevation import elevation, redrawn
 from models.words import Figures
 
+_LETTERS_A_PANEL = 6
+
 
 @dataclass(frozen=True, slots=True)
 class Wanted:
@@ -23,7 +25,9 @@ def draw(rated: Rated, wanted: Wanted) -> Picture:
     """The drawing, laid out anew. It may take seconds on a crowded truss."""
     truss, row = rated.bridge.trusses[wanted.truss], rated.rating.trusses[wanted.truss]
     level, figures = rated.rating.upper_level, Figures(rated.bridge.units or "SI")
-    return elevation(truss, row, wanted.view, level, figures, wanted.across, bar_names=False)
+    # A figure needs some six letters a panel: larger ones would only be tried in vain.
+    across = max(wanted.across, _LETTERS_A_PANEL * (len(truss.deck_joints) - 1))
+    return elevation(truss, row, wanted.view, level, figures, across, bar_names=False)
 
 
 def draw_again(rated: Rated, wanted: Wanted, before: Picture) -> Picture | None:

@@ -9,14 +9,15 @@ from kivy.properties import ColorProperty
 
 from inspector.app.theme import NAMES, THEMES
 
+# Kivy binds only to properties that a class is made with, and takes a name that begins with `on_` for an event.
+_Roles: Any = type("_Roles", (EventDispatcher,), {role: ColorProperty([0, 0, 0, 1]) for role in NAMES})
 
-class Paint(EventDispatcher):
+
+class Paint(_Roles):
     """The colours of the moment, by the roles of `inspector.app.theme.Roles`."""
 
     def __init__(self, name: str, **options: Any) -> None:
         super().__init__(**options)
-        for role in NAMES:
-            self.apply_property(**{role: ColorProperty([0, 0, 0, 1])})
         self.wear(name)
 
     def wear(self, name: str) -> None:
