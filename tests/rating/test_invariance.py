@@ -22,6 +22,8 @@ ROUNDING_AT_A_FLAT_JOINT = 1e-5
 them in the other bars is the difference of very large numbers."""
 
 few = settings(max_examples=EXAMPLES)
+given_pressures = sites().filter(lambda drawn: "crowd by rule" not in drawn[1])
+"""A standard's pressure goes by metres and feet: it does not grow with the bridge."""
 
 
 def rounding(labels: frozenset[str]) -> float:
@@ -48,7 +50,7 @@ def test_a_bridge_rates_the_same_from_the_other_bank(
 
 
 @few
-@given(sites(), st.sampled_from((0.125, 0.3, 7.0, 1000.0)))
+@given(given_pressures, st.sampled_from((0.125, 0.3, 7.0, 1000.0)))
 def test_strength_and_load_scale_together(drawn: Labelled, factor: float) -> None:
     """A metal as many times stronger, stiffer and heavier under loads as many times greater rates the same."""
     document, labels = drawn
@@ -58,7 +60,7 @@ def test_strength_and_load_scale_together(drawn: Labelled, factor: float) -> Non
 
 
 @few
-@given(sites(), st.sampled_from((0.5, 1.7, 3.0, 10.0)))
+@given(given_pressures, st.sampled_from((0.5, 1.7, 3.0, 10.0)))
 def test_similar_bridges_rate_the_same(drawn: Labelled, factor: float) -> None:
     """A bridge of other size rates the same under the same pressures if its own weight grows as its strength does."""
     document, labels = drawn
