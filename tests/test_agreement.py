@@ -21,6 +21,10 @@ from models.resistance.registry import basis
 DOCUMENTS = 160
 SEED = 7
 PARTS = 20
+OTHER_FIRST = 1000
+OTHER_DOCUMENTS = 30
+OTHER_PARTS = 5
+"""Documents for each of the other bases, none of them among the ones for `lrfr`."""
 TENTH = (
     "determinate",
     "redundant",
@@ -69,10 +73,10 @@ def document_of(number: int) -> tuple[dict[str, Any], frozenset[str]]:
 
 def rated(document: Mapping[str, Any]) -> dict[str, Any]:
     read = site.read_document(document)
-    rating = rate(
-        prepare(read.bridge), fold_all(read.bridge, read.journal), basis("lrfr"), Provenance("none", "under test")
+    by = basis(read.bridge.rating.basis)
+    return result.document(
+        rate(prepare(read.bridge), fold_all(read.bridge, read.journal), by, Provenance("none", "test"))
     )
-    return result.document(rating)
 
 
 @pytest.mark.slow
@@ -82,6 +86,20 @@ def test_program_agrees_with_the_force_method(part: int) -> None:
     found = []
     for number in range(part, DOCUMENTS, PARTS):
         document, _ = document_of(number)
+        theirs, ours = rated(document), solve(document)
+        found += [f"document {number}: {what}" for what in differences(theirs, ours)]
+    assert found == []
+
+
+@pytest.mark.slow
+@pytest.mark.parametrize("name", ["allowable stress", "eurocode"])
+@pytest.mark.parametrize("part", range(OTHER_PARTS))
+def test_program_agrees_on_other_bases(part: int, name: str) -> None:
+    """Whole ratings by allowable stresses and by the Eurocodes agree too, resistances of every level among them."""
+    found = []
+    for number in range(part, OTHER_DOCUMENTS, OTHER_PARTS):
+        document, _ = document_of(OTHER_FIRST + number)
+        document["rating"]["basis"] = name
         theirs, ours = rated(document), solve(document)
         found += [f"document {number}: {what}" for what in differences(theirs, ours)]
     assert found == []

@@ -17,6 +17,11 @@ FIGURES = (
 HUGE = 1e6  # a rating factor on a live force that is rounding alone
 
 
+def upper(by_level: JSON) -> Any:
+    """Return what stands at the upper level, which comes last."""
+    return list(by_level.values())[-1]
+
+
 def close(one: Any, other: Any, rel: float, floor: float = 0.0) -> bool:
     """Tell whether two figures agree, or neither exists."""
     if not isinstance(one, int | float) or not isinstance(other, int | float):
@@ -68,7 +73,7 @@ def _factors(theirs: JSON, ours: JSON, rel: float) -> list[str]:
             continue  # the program kept a live force that is rounding alone
         if not close(figure, mine, rel + loose, loose):
             found.append(f"rating factor {level}: {figure} against {mine}")
-    least = ours["rating factor"]["operating"]
+    least = upper(ours["rating factor"])
     if least is None or found:
         return found
     ties = {(check, load) for factor, check, load in ours["candidates"] if factor <= least * (1 + rel) + 1e-12}
@@ -84,6 +89,11 @@ def _rest(theirs: JSON, ours: JSON, rel: float) -> list[str]:
         for path in FIGURES
         if not close(_at(theirs, path), _at(ours, path), rel)
     ]
+    for level, both in ours["lower resistance"].items():
+        for direction, mine in zip(("tension", "compression"), both, strict=True):
+            figure = _at(theirs, (f"resistance {level}", direction))
+            if not close(figure, mine, rel):
+                found.append(f"resistance {level} {direction}: {figure} against {mine}")
     figure, mine = theirs["loss allowance"], ours["loss allowance"]
     # where no clause covers how thin plates buckle, the program may count on less than the judge
     sooner = not ours["allowance covered"] and figure is not None and (mine is None or figure < mine)
@@ -98,7 +108,7 @@ def _bar(theirs: JSON, ours: JSON, rel: float) -> list[str]:
     if not ours["severed"]:
         return _rest(theirs, ours, rel) + _forces(theirs, ours, rel) + _factors(theirs, ours, rel)
     found = []
-    if theirs["area"] != 0 or theirs["check"] != "severed" or theirs["rating factor"]["operating"] != 0:
+    if theirs["area"] != 0 or theirs["check"] != "severed" or upper(theirs["rating factor"]) != 0:
         found.append(f"severed bar has area {theirs['area']}, check {theirs['check']}, {theirs['rating factor']}")
     if not close(theirs["nominal area"], ours["nominal area"], rel):
         found.append(f"nominal area: {theirs['nominal area']} against {ours['nominal area']}")
@@ -110,15 +120,15 @@ def _structure(result: JSON, solution: JSON, rel: float) -> list[str]:
     for level, mine in solution["structure"].items():
         if not close(theirs["rating factor"][level], mine, rel, 1e-12):
             found.append(f"structure, rating factor {level}: {theirs['rating factor'][level]} against {mine}")
-    least = solution["structure"]["operating"]
+    least = upper(solution["structure"])
     if found or least is None:
         return found
     ties = [
         (bar["truss"], bar["bar"])
         for bar in solution["bars"]
         if not bar["severed"]
-        and bar["rating factor"]["operating"] is not None
-        and bar["rating factor"]["operating"] <= least * (1 + rel) + 1e-12
+        and upper(bar["rating factor"]) is not None
+        and upper(bar["rating factor"]) <= least * (1 + rel) + 1e-12
     ]
     if ties and (theirs["truss"], theirs["bar"]) not in ties:
         found.append(f"structure, governing bar: {(theirs['truss'], theirs['bar'])} against {ties}")

@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 import math
-from collections.abc import Callable
+from collections.abc import Callable, Mapping
 from dataclasses import dataclass
 from typing import Any
 
@@ -11,11 +11,11 @@ import numpy as np
 from independent import loads, sections
 from independent.condition import Condition, fold
 from independent.force_method import Frame
-from independent.resistance import SYSTEMS, Resistance, condition_factor, resistance
+from independent.other_bases import RULES, Rules
+from independent.resistance import SYSTEMS, Resistance, condition_factor
 from independent.units import si
 
 JSON = dict[str, Any]
-LEVELS = {"inventory": 1.75, "operating": 1.35}
 NO_FORCE = 1e-9  # of the largest force in the truss: below it a bar has none
 SINGULAR = 1e8
 STEPS = 10
@@ -31,25 +31,32 @@ class Effects:
     live: dict[str, tuple[float, float]]
 
 
-def factored_dead(effects: Effects, sign: int) -> float:
+def factored_dead(effects: Effects, sign: int, rules: Rules) -> float:
     """Return the factored dead effect in a direction: each part at its greatest factor where it adds."""
-    dc, dw = sign * effects.components, sign * effects.wearing
-    return (1.25 if dc > 0 else 0.90) * dc + (1.50 if dw > 0 else 0.65) * dw
+    parts = zip((effects.components, effects.wearing), rules.dead, strict=True)
+    return sum((adds if sign * part > 0 else relieves) * sign * part for part, (adds, relieves) in parts)
 
 
-def candidates(effects: Effects, own: Resistance, factor: float, factor_live: float, tiny: float) -> list[Candidate]:
-    """Return every rating factor of a bar with its check and load."""
+def candidates(
+    effects: Effects,
+    own: Resistance,
+    factor: float,
+    factor_live: Mapping[str, float],
+    tiny: float,
+    rules: Rules = RULES["lrfr"],
+) -> list[Candidate]:
+    """Return every rating factor of a bar with its check and load; `factor_live` is by name of the load."""
     found: list[Candidate] = []
     directions = ((1, own.tension, own.tension_check), (-1, own.compression, "flexural buckling"))
     for sign, strength, check in directions:
-        margin = factor * strength - factored_dead(effects, sign)
+        margin = factor * strength - factored_dead(effects, sign, rules)
         if margin < 0:
             found.append((0.0, "dead load", None))
             continue
         for name, extremes in effects.live.items():
             force = sign * extremes[0 if sign > 0 else 1]
             if force > tiny:
-                found.append((margin / (factor_live * force), check, name))
+                found.append((margin / (factor_live[name] * force), check, name))
     return found
 
 
@@ -72,7 +79,12 @@ class Truss:
         self.cases = [*loads.dead(document, name, truss, weighed), *units]
         self.frame, self.base = self.framed(self.carrying)
         self._flexible: dict[str, list[float]] = {}
-        self._owns: dict[tuple[str, float], Resistance] = {}
+        self._owns: dict[tuple[str, float, str], Resistance] = {}
+        self.rules = RULES[document["rating"]["basis"]]
+        kinds = {load["name"]: load["kind"] for load in document["rating"]["live"]}
+        self.live_factors = {
+            level: {name: by_kind[kind] for name, kind in kinds.items()} for level, by_kind in self.rules.levels.items()
+        }
         uncertain = self.frame.self_stress > 0 and any(self.conditions[key].uncertain() for key in self.carrying)
         self.variants = ("zero", "whole") if uncertain else ("zero",)
 
@@ -108,15 +120,25 @@ class Truss:
         }
         return Effects(numbers[0], numbers[1], live)
 
-    def own(self, key: str, left: float = 1.0) -> Resistance:
-        """Return a bar's factored resistance with a share of its thickness left."""
-        if (key, left) not in self._owns:
+    def own(self, key: str, left: float = 1.0, level: str = "") -> Resistance:
+        """Return a bar's factored resistance with a share of its thickness left, at the upper level or another."""
+        level = level or self.rules.upper
+        if (key, left, level) not in self._owns:
             built, top = self.document.get("built"), self.truss["top chord"]
-            self._owns[key, left] = resistance(self.bars[key], self.conditions[key], top, built, left)
-        return self._owns[key, left]
+            strength = self.rules.strength[level]
+            self._owns[key, left, level] = strength(self.bars[key], self.conditions[key], top, built, left)
+        return self._owns[key, left, level]
 
-    def factors(self, key: str) -> tuple[float, float]:
-        """Return the condition factor and the system factor of a bar."""
+    def found(self, key: str, effects: Effects, tiny: float, left: float = 1.0, level: str = "") -> list[Candidate]:
+        """Return every rating factor of a bar under these forces, with its check and load."""
+        level = level or self.rules.upper
+        own, factor = self.own(key, left, level), strength_factor(self, key)
+        return candidates(effects, own, factor, self.live_factors[level], tiny, self.rules)
+
+    def factors(self, key: str) -> tuple[float, float] | tuple[None, None]:
+        """Return the condition factor and the system factor of a bar; none where the basis has none."""
+        if not self.rules.reduced:
+            return None, None
         system = self.bars[key].get("system", self.document["rating"]["system"])
         return condition_factor(self.conditions[key], self.own(key).measured), SYSTEMS[system]
 
@@ -155,7 +177,7 @@ def largest(effects: dict[str, Effects]) -> float:
 def strength_factor(truss: Truss, key: str) -> float:
     """Return the product of condition and system factor, not below 0.85 (MBE 6A.4.2.1)."""
     condition, system = truss.factors(key)
-    return max(0.85, condition * system)
+    return 1.0 if condition is None or system is None else max(0.85, condition * system)
 
 
 def lowest(found: list[Candidate]) -> float | None:
@@ -186,15 +208,13 @@ def allowance(truss: Truss, key: str, effects: dict[str, dict[str, Effects]], ti
 
     The first step of a grid that ends below 1, then the crossing in it, everything computed again at every trial.
     """
-    factor = strength_factor(truss, key)
 
     def at(lost: float) -> float:
-        own = truss.own(key, 1 - lost)
         held = truss.frame.self_stress == 0
         found = []
         for variant in truss.variants:
             forces = effects[variant][key] if held else truss.thinned(key, variant, 1 - lost)
-            found += candidates(forces, own, factor, LEVELS["operating"], tiny)
+            found += truss.found(key, forces, tiny, 1 - lost)
         least = lowest(found)
         return math.inf if least is None else least
 
@@ -218,15 +238,14 @@ def without(truss: Truss, key: str, tiny: float) -> str | float | None:
         if effects is None:
             return "mechanism"
         for other, own in effects.items():
-            strength = truss.own(other)
-            found += candidates(own, strength, strength_factor(truss, other), LEVELS["operating"], tiny)
+            found += truss.found(other, own, tiny)
     return lowest(found)
 
 
 def severed(truss: Truss, key: str) -> JSON:
     """Return the row of a bar that is gone."""
     area = sections.properties(truss.conditions[key].section, truss.conditions[key].nominal()).area
-    zero = {"inventory": 0.0, "operating": 0.0}
+    zero = dict.fromkeys(truss.rules.levels, 0.0)
     return {"truss": truss.name, "bar": key, "area": 0.0, "nominal area": area, "rating factor": zero, "severed": True}
 
 
@@ -234,13 +253,12 @@ def row(truss: Truss, key: str, effects: dict[str, dict[str, Effects]], tiny: fl
     """Return one bar's row: its worse variant's forces, factors and every candidate that could govern."""
     own, condition = truss.own(key), truss.conditions[key]
     phi_c, phi_s = truss.factors(key)
-    factor = strength_factor(truss, key)
     by_level = {
-        level: {v: candidates(effects[v][key], own, factor, size, tiny) for v in truss.variants}
-        for level, size in LEVELS.items()
+        level: {v: truss.found(key, effects[v][key], tiny, level=level) for v in truss.variants}
+        for level in truss.rules.levels
     }
-    operating = by_level["operating"]
-    shown = min(truss.variants, key=lambda v: math.inf if lowest(operating[v]) is None else lowest(operating[v]))
+    upper = by_level[truss.rules.upper]
+    shown = min(truss.variants, key=lambda v: math.inf if lowest(upper[v]) is None else lowest(upper[v]))
     forces = effects[shown][key]
     allowed = allowance(truss, key, effects, tiny) if redundancy else None
     return {
@@ -255,7 +273,12 @@ def row(truss: Truss, key: str, effects: dict[str, dict[str, Effects]], tiny: fl
         "condition factor": phi_c,
         "system factor": phi_s,
         "rating factor": {level: lowest([c for v in found.values() for c in v]) for level, found in by_level.items()},
-        "candidates": sorted((c for v in operating.values() for c in v), key=lambda c: c[0]),
+        "candidates": sorted((c for v in upper.values() for c in v), key=lambda c: c[0]),
+        "lower resistance": {
+            level: (lower.tension, lower.compression)
+            for level, lower in ((level, truss.own(key, level=level)) for level in truss.rules.levels)
+            if (lower.tension, lower.compression) != (own.tension, own.compression)
+        },
         "loss allowance": allowed,
         "without it": without(truss, key, tiny) if redundancy else None,
         "allowance covered": truss.own(key, 0.05 if allowed is None else 1 - allowed).covered,
@@ -294,13 +317,13 @@ def solve(document: JSON, *, redundancy: bool = True) -> JSON:
 
     Parameters
     ----------
-    document : a site file as parsed JSON, basis `lrfr`.
+    document : a site file as parsed JSON.
     redundancy : also find loss allowances and what is left without each bar (the slow part).
 
     Returns
     -------
     `trusses`, `bars` and `structure` much as in the result file; each bar also lists its `candidates`
-    (operating factor, check, load), lowest first, so that a tie can be told from a disagreement.
+    (factor at the upper level, check, load), lowest first, so that a tie can be told from a disagreement.
     """
     result: JSON = {"trusses": {}, "bars": [], "structure": None}
     for name, one in expanded(document).items():
@@ -312,14 +335,15 @@ def solve(document: JSON, *, redundancy: bool = True) -> JSON:
         effects = {variant: truss.all_effects(variant) or {} for variant in truss.variants}
         tiny = NO_FORCE * max(largest(own) for own in effects.values())
         result["bars"] += [row(truss, key, effects, tiny, redundancy) for key in truss.carrying]
+    levels = RULES[document["rating"]["basis"]].levels
     rated = [bar for bar in result["bars"] if not bar["severed"] and bar["candidates"]]
     moving = any(
         truss["mechanisms"] or truss["verdict"] == "nearly a mechanism" for truss in result["trusses"].values()
     )
     result["structure"] = (
-        dict.fromkeys(LEVELS, 0.0)
+        dict.fromkeys(levels, 0.0)
         if moving
-        else {level: min((bar["rating factor"][level] for bar in rated), default=None) for level in LEVELS}
+        else {level: min((bar["rating factor"][level] for bar in rated), default=None) for level in levels}
     )
     return result
 

@@ -320,7 +320,7 @@ def test_rating_factor_is_the_worked_one(phi: float, inventory: float, operating
     own = Resistance(0.95 * 36 * 7.50, "tension yield", 1e9, 7.50, measured=False, slender=False)
     effects = Effects(60, 10, {"crowd": (50.0, 0.0)})
     for live, printed in ((1.75, inventory), (1.35, operating)):
-        (factor, check, load), *_ = candidates(effects, own, phi, live, 0.0)
+        (factor, check, load), *_ = candidates(effects, own, phi, {"crowd": live}, 0.0)
         assert (check, load) == ("tension yield", "crowd")
         assert factor == pytest.approx(printed, rel=1e-4)
 
@@ -328,7 +328,7 @@ def test_rating_factor_is_the_worked_one(phi: float, inventory: float, operating
 def test_dead_load_alone_can_exceed_a_bar() -> None:
     """A bar that its dead load overstresses rates 0, with no live load named."""
     own = Resistance(70.0, "tension yield", 1e9, 1.0, measured=False, slender=False)
-    assert (0.0, "dead load", None) in candidates(Effects(60, 0, {"crowd": (1.0, 0.0)}), own, 1.0, 1.35, 0.0)
+    assert (0.0, "dead load", None) in candidates(Effects(60, 0, {"crowd": (1.0, 0.0)}), own, 1.0, {"crowd": 1.35}, 0.0)
 
 
 def test_unknown_steel_takes_the_older_class_on_a_boundary_year() -> None:
