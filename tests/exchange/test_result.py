@@ -164,8 +164,9 @@ def test_reads_back() -> None:
 def test_schema_files_are_those_of_the_program() -> None:
     """The schemas that are published are the ones that the program would write today."""
     docs = Path(__file__).parents[2] / "docs"
-    namespace: dict[str, object] = {"__name__": "make_schema", "__file__": str(docs / "make_schema.py")}
-    exec((docs / "make_schema.py").read_text(encoding="utf-8"), namespace)  # noqa: S102  # our own script, outside any package
+    script = docs / "scripts" / "make_schema.py"
+    namespace: dict[str, object] = {"__name__": "make_schema", "__file__": str(script)}
+    exec(script.read_text(encoding="utf-8"), namespace)  # noqa: S102  # our own script, outside any package
     texts = namespace["texts"]
     assert callable(texts)
     for name, text in texts().items():

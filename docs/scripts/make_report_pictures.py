@@ -2,7 +2,7 @@
 
 Needs pdftoppm (on Debian: poppler-utils). Run it again after a change of the report:
 
-    python docs/make_report_pictures.py
+    python docs/scripts/make_report_pictures.py
 """
 
 from __future__ import annotations
@@ -13,7 +13,7 @@ from pathlib import Path
 
 from inspector import desk, samples
 
-PICTURES = Path(__file__).parent / "pictures"
+PICTURES = Path(__file__).parents[1] / "pictures"
 PAGES = {"report-result": 2, "report-elevation": 3, "report-hand-check": 6}
 SAMPLE = "pratt-half-through"
 

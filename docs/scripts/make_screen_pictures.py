@@ -2,7 +2,7 @@
 
 Needs the libraries that `inspector app` asks for. Run it again after a change of the screens:
 
-    python docs/make_screen_pictures.py
+    python docs/scripts/make_screen_pictures.py
 """
 
 from __future__ import annotations
@@ -13,12 +13,12 @@ import tempfile
 from pathlib import Path
 from typing import Any
 
-ROOT = Path(__file__).parents[1]
+ROOT = Path(__file__).parents[2]
 sys.path[:0] = [str(ROOT), str(ROOT / "tests")]
 
 from inspector.app import bootstrap  # noqa: E402
 
-PICTURES = Path(__file__).parent / "pictures"
+PICTURES = Path(__file__).parents[1] / "pictures"
 SAMPLE = "Ellerwick Mill footbridge"
 BAR = "L3-L4"
 DAY = "2026-06-03"

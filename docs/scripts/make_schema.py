@@ -20,5 +20,5 @@ def texts() -> dict[str, str]:
 
 if __name__ == "__main__":
     for name, text in texts().items():
-        (Path(__file__).parent / name).write_text(text, encoding="utf-8")
+        (Path(__file__).parents[1] / name).write_text(text, encoding="utf-8")
         print(name)
