@@ -96,6 +96,7 @@ _BAR: Final[Form[BarRating]] = _record(
         "nominal area": (_FIGURE, _of("nominal_area")),
         "dead": (nullable(_DEAD, dict), lambda bar: None if bar.dead_components is None else bar),
         "live": (nullable(Named(_EFFECT), dict), _of("live")),
+        "imposed": (_EFFECT, _of("imposed")),
         "resistance": (_RESISTANCE, lambda bar: bar),
         "resistance inventory": (_RESISTANCE, lambda bar: bar.lower_levels.get("inventory")),
         "condition factor": (_FIGURE_OR_NULL, _of("condition_factor")),
@@ -113,6 +114,7 @@ _BAR: Final[Form[BarRating]] = _record(
         "nominal area": "as built, m^2",
         "dead": "unfactored force; null where the truss does not stand",
         "live": "by name of the load: the most that its worst arrangement gives, unfactored, N",
+        "imposed": "what settlements, temperature and bars made short pull (max) and push (min), unfactored, N",
         "resistance": "factored, without condition and system factor, at the upper level",
         "resistance inventory": "the same at the inventory level, where it differs: basis `allowable stress`",
         "rating factor": "the lowest over tension, compression and all live loads, by level; null where there is none",
@@ -121,7 +123,7 @@ _BAR: Final[Form[BarRating]] = _record(
         "loss allowance": "fraction of every plate's remaining thickness that could go before the factor falls to 1",
         "without it": "lowest rating factor of the other bars without this one, or `mechanism`",
     },
-    optional=("resistance inventory",),
+    optional=("imposed", "resistance inventory"),
 )
 _TRUSS: Final[Form[TrussRating]] = _record(
     {

@@ -12,6 +12,7 @@ from models.loading.dead import bar_weights, own_weight_on_joints
 from models.loading.live import CROWDS
 from models.rating.fitted import Stock
 from models.rating.prepare import PreparedTruss, Standing
+from models.statics.imposed import imposed_forces, imposed_reactions
 from models.statics.response import Response
 
 
@@ -23,10 +24,10 @@ class Answer:
 
     Parameters
     ----------
-    dead : (2, m) components and wearing.
+    dead : (2 + k, m) components and wearing, then what each imposed change brings about.
     ordinates : (m, d) influence ordinates at the deck joints.
     loads : names, in order. live : (loads, 2, m) largest tension, and largest compression (negative).
-    supports : joints. support_dead : (2, s). support_live : (loads, s) the least (most lifting) reaction.
+    supports : joints. support_dead : (2 + k, s). support_live : (loads, s) the least (most lifting) reaction.
     displacement : the largest under dead load and a full crowd, m.
     """
 
@@ -64,6 +65,12 @@ def solve(prepared: PreparedTruss, standing: Standing, stock: Stock, flexibility
     ordinates = _without_noise(down[:, prepared.geometry.deck].T, response.noise).T
     supports = np.flatnonzero(standing.geometry.held[1::2])
     lift = -response.reactions[1::2, 1::2][supports]
+    support_dead = joint_load @ lift.T
+    if len(prepared.misfits):
+        locked = imposed_forces(response, flexibility[standing.kept], prepared.misfits[:, standing.kept])
+        dead = np.concatenate([dead, locked])
+        held = imposed_reactions(standing.geometry, locked)[:, 1::2][:, supports]
+        support_dead = np.concatenate([support_dead, held])
     loads = tuple(name for name, pattern in prepared.patterns.items() if pattern is not None)
     rows = np.concatenate([ordinates, lift[:, prepared.geometry.deck]])
     found = np.array([pattern.extremes(rows) for pattern in prepared.patterns.values() if pattern is not None])
@@ -77,7 +84,7 @@ def solve(prepared: PreparedTruss, standing: Standing, stock: Stock, flexibility
         loads=loads,
         live=found[:, :, :bars],
         supports=supports,
-        support_dead=joint_load @ lift.T,
+        support_dead=support_dead,
         support_live=found[:, 1, bars:],
         displacement=_displacement(prepared, response, joint_load.sum(axis=0), flexibility[standing.kept]),
     )

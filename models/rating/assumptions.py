@@ -7,6 +7,7 @@ from collections.abc import Iterator
 from models import words
 from models.bridge import Footbridge
 from models.loading.dead import ASSUMED_CONNECTION_ALLOWANCE
+from models.loading.imposed import ASSUMED_EXPANSION
 from models.rating.outcome import Outcome
 from models.rating.prepare import HALF_THROUGH_K, held_by_frames
 from models.resistance.protocol import Basis
@@ -41,6 +42,11 @@ def _loads(bridge: Footbridge) -> Iterator[str]:
         yield "The wearing course weighs nothing, as the site gives none."
     if bridge.deck.rests_on is None:
         yield "The deck rests on the joints, as the site does not say."
+    if any(one.change is not None and one.expansion is None for one in bridge.rating.imposed or ()):
+        yield (
+            f"Bars expand by {ASSUMED_EXPANSION:f} per kelvin where the site gives nothing else "
+            "(EN 1991-1-5, annex C, from memory)."
+        )
     yield "Live loads act without a dynamic allowance (AASHTO pedestrian guide 2009, 3)."
 
 

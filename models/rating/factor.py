@@ -22,15 +22,18 @@ def factored_dead(basis: Basis, dead: Array) -> Array:
 
     Parameters
     ----------
-    dead : (2, ..., m) components and wearing, N, tension positive.
+    dead : (2 + k, ..., m) components and wearing, N, tension positive; then what each imposed change brings about.
 
     Returns
     -------
     (2, ..., m) in tension and in compression, N; each part takes the factor of its own sign in the
-    direction that is checked, the lesser where it relieves.
+    direction that is checked, the lesser where it relieves. What is imposed takes the factor of components where it
+    acts and counts for nothing where it relieves: creep or slip may have undone it (common practice, no source).
     """
-    total = np.zeros_like(dead)
-    for part, factors in zip(dead, (basis.components, basis.wearing), strict=True):
+    total = np.zeros_like(dead[:2])
+    for part in dead[2:]:
+        total += basis.components.greatest * np.maximum(_SIGNS.reshape(2, *([1] * part.ndim)) * part, 0.0)
+    for part, factors in zip(dead[:2], (basis.components, basis.wearing), strict=True):
         for direction, sign in enumerate(_SIGNS):
             effect = sign * part
             total[direction] += np.where(effect > 0, factors.greatest, factors.least) * effect
@@ -72,7 +75,7 @@ def rating_factors(basis: Basis, capacity: Array, dead: Array, live: Array, gamm
     Parameters
     ----------
     capacity : (levels, 2, m) factored resistance times condition and system factor, N.
-    dead : (2, ..., m) components and wearing. live : (loads, 2, ..., m) largest tension and largest
+    dead : (2 + k, ..., m), as for `factored_dead`. live : (loads, 2, ..., m) largest tension and largest
         compression (negative), N.
     gamma : (levels, loads) as `live_factors` gives them.
 
@@ -107,7 +110,7 @@ def demands(basis: Basis, dead: Array, live: Array, gamma: Array) -> Array:
 
     Parameters
     ----------
-    dead : (2, m) components and wearing. live : (loads, 2, m), as for `rating_factors`.
+    dead : (2 + k, m). live : (loads, 2, m), as for `rating_factors`.
     gamma : (loads,) live load factors of the level that is looked at.
 
     Returns

@@ -195,9 +195,10 @@ def of_bridge(bridge: Footbridge, basis: Basis) -> Iterator[Finding]:
     """What the basis leaves out, keys that are read and kept but that no figure uses yet, and what is not said."""
     for sentence in basis.leaves_out:
         yield Finding("left out", sentence)
-    if bridge.rating.imposed:
-        why = "settlement, temperature and bars made short enter no figure."
-        yield Finding("not used", sentences.not_used("rating/imposed", why))
+    for place, imposed in enumerate(bridge.rating.imposed or ()):
+        if imposed.truss and imposed.joint and imposed.joint not in bridge.trusses[imposed.truss].supports:
+            why = f"{imposed.joint} is no support, so that it goes where the bars let it."
+            yield Finding("not used", sentences.not_used(f"rating/imposed/{place}", why), imposed.truss)
     if bridge.half_through is not None:
         why = "the lateral stability of the top chord is not rated."
         yield Finding("not used", sentences.not_used("half through", why))

@@ -9,7 +9,9 @@ import math
 from collections.abc import Collection, Iterable, Mapping
 from dataclasses import dataclass
 
-from models.calculation import HandCheck, Number, Sheet, Step, greatest
+import numpy as np
+
+from models.calculation import Array, HandCheck, Number, Sheet, Step, greatest
 from models.rating.outcome import Outcome
 from models.resistance.protocol import DeadFactors, Level, Member
 from models.section import write_plates, write_section
@@ -122,13 +124,10 @@ def _write_factor(outcome: Outcome, number: int, direction: int, resisted: Mappi
     name = ("tension", "compression")[direction]
     capacities = _write_capacities(outcome, number, direction, resisted, sheet)
     capacity = capacities[len(basis.levels) - 1]
-    components = sheet.given("DC", sign * figures.dead[0, number], "force", f"dead load of components, as {name}")
-    wearing = sheet.given("DW", sign * figures.dead[1, number], "force", f"wearing course, as {name}")
-    gdc = _dead_factor(sheet, "gDC", basis.components, components)
-    gdw = _dead_factor(sheet, "gDW", basis.wearing, wearing)
+    dead = _write_dead(outcome, figures.dead[:, number], direction, sheet)
     load = int(figures.load[number])
     if load < 0:
-        sheet.note("margin", capacity - gdc * components - gdw * wearing, "force", "capacity less factored dead load")
+        sheet.note("margin", capacity - dead, "force", "capacity less factored dead load")
         exceeded = bool(figures.dead_exceeds[:, number].any())
         return (
             "Dead load alone exceeds the capacity: rating factor 0."
@@ -140,10 +139,25 @@ def _write_factor(outcome: Outcome, number: int, direction: int, resisted: Mappi
     live = sheet.given("LL", size, "force", f"{live_name} at its worst, as {name}")
     for at, level in enumerate(basis.levels):
         gamma = _live_factor(sheet, level, outcome.prepared.kinds[live_name])
-        factor = (capacities.get(at, capacity) - (gdc * components + gdw * wearing)) / (gamma * live)
+        factor = (capacities.get(at, capacity) - dead) / (gamma * live)
         title = f"rating factor, {level.name}"
         sheet.note(f"RF {level.name}", greatest(factor, 0.0), "ratio", title, basis.rating_source)
     return ""
+
+
+def _write_dead(outcome: Outcome, dead: Array, direction: int, sheet: Sheet) -> Number:
+    """Factored dead load, and what imposed changes add to it, in the direction that governs."""
+    basis, sign, name = outcome.task.basis, (1.0, -1.0)[direction], ("tension", "compression")[direction]
+    components = sheet.given("DC", sign * dead[0], "force", f"dead load of components, as {name}")
+    wearing = sheet.given("DW", sign * dead[1], "force", f"wearing course, as {name}")
+    gdc = _dead_factor(sheet, "gDC", basis.components, components)
+    gdw = _dead_factor(sheet, "gDW", basis.wearing, wearing)
+    if len(dead) == 2:
+        return gdc * components + gdw * wearing
+    size = float(np.maximum(sign * dead[2:], 0.0).sum())
+    imposed = sheet.given("IM", size, "force", f"imposed changes that act as {name}; the others count for nothing")
+    gim = sheet.given("gIM", basis.components.greatest, "ratio", "their load factor, as of DC", basis.components.source)
+    return gdc * components + gdw * wearing + gim * imposed
 
 
 def _dead_factor(sheet: Sheet, symbol: str, factors: DeadFactors, effect: Number) -> Number:

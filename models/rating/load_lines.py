@@ -6,6 +6,7 @@ from collections.abc import Iterator
 
 from models.bridge import Footbridge, LiveLoad
 from models.loading.dead import ASSUMED_CONNECTION_ALLOWANCE
+from models.loading.imposed import ASSUMED_EXPANSION
 from models.loading.live import VEHICLES
 from models.loading.rules import RULES
 from models.quantity import Quantity
@@ -16,7 +17,8 @@ _SITE = "site file"
 
 def load_lines(bridge: Footbridge, basis: Basis) -> tuple[FactorLine, ...]:
     """Dead loads, live loads and the factors of the basis."""
-    return (*_dead(bridge), *(_live(load) for load in bridge.rating.live), *basis.factor_lines())
+    live = (_live(load) for load in bridge.rating.live)
+    return (*_dead(bridge), *live, *_imposed(bridge, basis), *basis.factor_lines())
 
 
 def _dead(bridge: Footbridge) -> Iterator[FactorLine]:
@@ -34,6 +36,24 @@ def _dead(bridge: Footbridge) -> Iterator[FactorLine]:
     elif deck.edge:
         for truss, load in deck.edge.items():
             yield FactorLine(f"edge, {truss}", load.text, _SITE)
+
+
+def _imposed(bridge: Footbridge, basis: Basis) -> Iterator[FactorLine]:
+    for one in bridge.rating.imposed or ():
+        where = f"truss {one.truss}" if one.truss else "all trusses"
+        if one.down is not None:
+            yield FactorLine(f"settlement of {one.joint}, {where}", f"{one.down.text} down", _SITE)
+        elif one.short is not None:
+            yield FactorLine(f"{one.bar} made short, {where}", one.short.text, _SITE)
+        elif one.change is not None:
+            expansion = ASSUMED_EXPANSION if one.expansion is None else one.expansion
+            value = f"{one.change:g} K, {1e6 * expansion:g} µm/m per K"
+            assumed = f"{_SITE}; expansion assumed (EN 1991-1-5, annex C, from memory)"
+            source = assumed if one.expansion is None else _SITE
+            yield FactorLine(f"change of temperature, {where}", value, source)
+    if bridge.rating.imposed:
+        value = f"{basis.components.greatest:.2f} where they act; what relieves counts for nothing"
+        yield FactorLine("imposed changes, load factor", value, "as of components (common practice, no source)")
 
 
 def _live(load: LiveLoad) -> FactorLine:

@@ -15,6 +15,7 @@ from models.condition import BarCondition
 from models.loading.dead import ASSUMED_CONNECTION_ALLOWANCE, deck_on_joints
 from models.loading.floor import floor_of
 from models.loading.live import Pattern, patterns
+from models.loading.imposed import misfits
 from models.rating.fitted import Fitted, Stock, fit, stock
 from models.statics.geometry import Geometry, geometry_of
 from models.statics.response import Response, respond
@@ -60,6 +61,7 @@ class PreparedTruss:
     patterns : live loads by name; None for one that cannot be computed. kinds : of what acts in each of them.
     tributary : (d,) length of deck that each deck joint carries, m.
     """
+    misfits : (k, m) how much too long each bar becomes under each change that the site imposes, m.
 
     truss: Truss
     geometry: Geometry
@@ -71,6 +73,7 @@ class PreparedTruss:
     kinds: Mapping[str, frozenset[str]]
     tributary: Array
     _standing: dict[frozenset[int], Standing] = field(default_factory=dict)
+    misfits: Array
 
     def standing(self, removed: frozenset[int]) -> Standing:
         """The truss without some of its bars; worked out once for each set."""
@@ -150,6 +153,7 @@ def _prepare_truss(bridge: Footbridge, truss: Truss) -> PreparedTruss:
 def _kinds(loads: tuple[LiveLoad, ...]) -> dict[str, frozenset[str]]:
     """The kinds of what acts in each live load, its own and its companions'."""
     own = {load.name: load.kind for load in loads}
+        misfits=misfits(bridge.rating, truss.name, geometry),
     return {
         load.name: frozenset({load.kind, *(own[companion.load] for companion in load.companions or ())})
         for load in loads

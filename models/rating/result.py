@@ -47,6 +47,7 @@ class BarRating(NamedTuple):
     capacity : resistance times condition and system factor, of the governing direction, N.
     loss_allowance : fraction of every plate's remaining thickness that could still go.
     without_it : ``mechanism``, or the lowest rating factor of the truss's other bars.
+    imposed : the sums of what imposed changes pull, and push, N, unfactored; None where nothing is imposed.
     lower_levels : by level: the resistance at a level below the upper one that has its own.
     """
 
@@ -79,6 +80,7 @@ class BarRating(NamedTuple):
     without_it: float | Literal["mechanism"] | None
     findings: tuple[Finding, ...] = ()
     lower_levels: Mapping[str, Resisted] = MappingProxyType({})
+    imposed: Effect | None = None
 
     @property
     def demand_over_capacity(self) -> float | None:
@@ -102,7 +104,8 @@ class Reaction:
     Parameters
     ----------
     dead : components and wearing, unfactored.
-    least : at 0.90 DC + 0.65 DW + the live factor times the live load that lifts most; negative is uplift.
+    least : at 0.90 DC + 0.65 DW + the live factor times the live load that lifts most; imposed changes that lift count
+        with the factor of components; negative is uplift.
     load : the load that gives the least.
     """
 

@@ -124,7 +124,7 @@ class _Table:
         """Unfactored forces; none in a mechanism, and none of bars that are out."""
         if self.figures is None:
             nothing: list[Any] = [None] * self.count
-            return {"dead_components": nothing, "dead_wearing": nothing, "live": nothing}
+            return {"dead_components": nothing, "dead_wearing": nothing, "live": nothing, "imposed": nothing}
         out = np.isnan(self.figures.dead[0]).tolist()
         by_bar = self.figures.live.transpose(2, 0, 1).tolist()
         live: list[Any] = [
@@ -135,7 +135,16 @@ class _Table:
             "dead_components": _cells(self.figures.dead[0]),
             "dead_wearing": _cells(self.figures.dead[1]),
             "live": live,
+            "imposed": self._imposed(out),
         }
+
+    def _imposed(self, out: list[bool]) -> list[Any]:
+        """What all imposed changes together pull and push each bar; none where nothing is imposed."""
+        by_change = self.figures.dead[2:] if self.figures else np.zeros((0, self.count))
+        if not len(by_change):
+            return [None] * self.count
+        sums = np.array([np.maximum(by_change, 0.0).sum(axis=0), np.minimum(by_change, 0.0).sum(axis=0)])
+        return [None if is_out else Effect._make(pair) for is_out, pair in zip(out, sums.T.tolist(), strict=True)]
 
     def governing(self) -> _Columns:
         """Rating factors, what governs them, and what else the bar has left."""
@@ -236,6 +245,7 @@ def _reactions(
     basis: Basis, answer: Answer, kinds: Mapping[str, frozenset[str]], joints: tuple[str, ...]
 ) -> list[Reaction]:
     relieved = basis.components.least * answer.support_dead[0] + basis.wearing.least * answer.support_dead[1]
+    relieved = relieved + basis.components.greatest * np.minimum(answer.support_dead[2:], 0.0).sum(axis=0)
     gamma = live_factors(basis, [kinds[load] for load in answer.loads]).max(axis=0)
     found = []
     for place, joint in enumerate(answer.supports.tolist()):
@@ -243,6 +253,6 @@ def _reactions(
         load = int(np.argmin(lifting)) if len(lifting) else -1
         lifts = load >= 0 and lifting[load] < 0
         least = float(relieved[place] + (lifting[load] if lifts else 0.0))
-        dead = float(answer.support_dead[:, place].sum())
+        dead = float(answer.support_dead[:2, place].sum())
         found.append(Reaction(joints[joint], dead, least, answer.loads[load] if lifts else None))
     return found

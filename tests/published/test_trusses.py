@@ -10,6 +10,7 @@ from published.example import Example, within
 
 from models.calculation import Array
 from models.statics.geometry import Geometry
+from models.statics.imposed import imposed_forces
 from models.statics.response import Response
 from models.statics.stability import judge
 
@@ -27,8 +28,7 @@ def solve(example: Example) -> tuple[Geometry, Response, Array, Array]:
     flexibility = geometry.lengths / (example.modulus * area)
     response = response_of(geometry, flexibility)
     imposed = np.array([example.imposed.get(bar, 0.0) for bar in geometry.bars])
-    # A free elongation e has the least energy where the self-stress takes back all of e that it can.
-    locked = -response.scale * (response.projector @ (response.scale * imposed)) / flexibility.min()
+    (locked,) = imposed_forces(response, flexibility, imposed[None])
     forces = response.forces @ load_vector(geometry, example.loads) + locked
     return geometry, response, forces, flexibility * forces + imposed
 

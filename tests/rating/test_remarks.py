@@ -160,13 +160,13 @@ def test_what_is_read_and_not_used_is_told() -> None:
     """Keys that no figure uses yet are named one by one, and the figures are those without them."""
     document = short()
     plain = rated(document)
-    document["rating"]["imposed"] = [{"kind": "temperature", "change": 30}]
+    document["rating"]["imposed"] = [{"kind": "settlement", "truss": "only", "joint": "L2", "down": "10 mm"}]
     document["half through"] = {"floor beam": {"section": "tube", "material": "steel", "span": "2 m"}}
     document["overrides"] = [{"truss": "only", "bar": "L0-L1", "what": "Fy", "value": "300 MPa", "why": "tests"}]
     bar_of(document, "U1-U2")["stitch spacing"] = "0.5 m"
     rating = rated(document)
     told = sorted(text.split("`")[1] for text in texts(rating, "not used"))
-    assert told == ["half through", "overrides", "rating/imposed", "stitch spacing"]
+    assert told == ["half through", "overrides", "rating/imposed/0", "stitch spacing"]
     assert [row.rating_factor for row in rating.bars] == [row.rating_factor for row in plain.bars]
     assert set(row_of(rating, "only", "L0-L1").live or {}) == {"crowd"}
 
