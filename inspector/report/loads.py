@@ -25,6 +25,8 @@ def loads(rating: Rating, bridge: Footbridge, figures: Figures, width: float) ->
         story += _reactions(truss, figures, width)
     if len({name for bar in rating.bars for name in bar.live or {}}) > 1:
         story += _live(rating, figures, width)
+    if any(bar.imposed is not None for bar in rating.bars):
+        story += _imposed(rating, figures, width)
     return story
 
 
@@ -78,6 +80,18 @@ def _live(rating: Rating, figures: Figures, width: float) -> list[Flowable]:
         rows.append((bar.truss, bar.bar, *pairs))
     story.append(table(("truss", "bar", *names), rows, (3, 3, *(4,) * len(names)), width, "ll" + "r" * len(names)))
     return story
+
+
+def _imposed(rating: Rating, figures: Figures, width: float) -> list[Flowable]:
+    """What imposed changes pull and push in every bar."""
+    story = heading(f"Forces of imposed changes, {figures.unit('force')}, unfactored", 90)
+    rows = [
+        (bar.truss, bar.bar, number(bar.imposed.maximum, figures), number(bar.imposed.minimum, figures))
+        for bar in rating.bars
+        if bar.imposed is not None
+    ]
+    head = ("truss", "bar", "sum of what pulls", "sum of what pushes")
+    return [*story, table(head, rows, (3, 3, 4, 4), width, "llrr")]
 
 
 def model(rating: Rating, bridge: Footbridge, figures: Figures, width: float) -> list[Flowable]:
