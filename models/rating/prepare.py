@@ -14,8 +14,8 @@ from models.calculation import Array
 from models.condition import BarCondition
 from models.loading.dead import ASSUMED_CONNECTION_ALLOWANCE, deck_on_joints
 from models.loading.floor import floor_of
-from models.loading.live import Pattern, patterns
 from models.loading.imposed import misfits
+from models.loading.live import Pattern, patterns
 from models.rating.fitted import Fitted, Stock, fit, stock
 from models.statics.geometry import Geometry, geometry_of
 from models.statics.response import Response, respond
@@ -60,8 +60,8 @@ class PreparedTruss:
     effective_lengths : (2, m) K times length, in and out of plane, m.
     patterns : live loads by name; None for one that cannot be computed. kinds : of what acts in each of them.
     tributary : (d,) length of deck that each deck joint carries, m.
-    """
     misfits : (k, m) how much too long each bar becomes under each change that the site imposes, m.
+    """
 
     truss: Truss
     geometry: Geometry
@@ -72,8 +72,8 @@ class PreparedTruss:
     patterns: Mapping[str, Pattern | None]
     kinds: Mapping[str, frozenset[str]]
     tributary: Array
-    _standing: dict[frozenset[int], Standing] = field(default_factory=dict)
     misfits: Array
+    _standing: dict[frozenset[int], Standing] = field(default_factory=dict)
 
     def standing(self, removed: frozenset[int]) -> Standing:
         """The truss without some of its bars; worked out once for each set."""
@@ -147,13 +147,13 @@ def _prepare_truss(bridge: Footbridge, truss: Truss) -> PreparedTruss:
         patterns=patterns(bridge.rating.live, floor_of(bridge, truss.name), x),
         kinds=_kinds(bridge.rating.live),
         tributary=np.append(panels, 0.0) / 2 + np.append(0.0, panels) / 2,
+        misfits=misfits(bridge.rating, truss.name, geometry),
     )
 
 
 def _kinds(loads: tuple[LiveLoad, ...]) -> dict[str, frozenset[str]]:
     """The kinds of what acts in each live load, its own and its companions'."""
     own = {load.name: load.kind for load in loads}
-        misfits=misfits(bridge.rating, truss.name, geometry),
     return {
         load.name: frozenset({load.kind, *(own[companion.load] for companion in load.companions or ())})
         for load in loads
