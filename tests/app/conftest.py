@@ -32,6 +32,7 @@ def screen_of_tests() -> None:
     from kivy.config import Config
 
     Config.set("graphics", "multisamples", "0")
+    Config.set("graphics", "maxfps", "0")
     for option, _ in Config.items("input"):
         Config.remove_option("input", option)
 

@@ -27,9 +27,21 @@ class Driver:
         self.frames(3)
 
     def frames(self, count: int = 1) -> None:
-        """Tick frames."""
+        """Tick frames; the last of them is drawn."""
+        self.blind_frames(count - 1)
+        self.loop.idle()
+
+    def blind_frames(self, count: int = 1) -> None:
+        """Tick frames without drawing them: everything is laid out as it would be seen."""
+        from kivy.clock import Clock
+        from kivy.lang import Builder
+
         for _ in range(count):
-            self.loop.idle()
+            Clock.tick()
+            self.loop.dispatch_input()
+            Builder.sync()
+            Clock.tick_draw()
+            Builder.sync()
 
     def until(self, condition: Callable[[], Any], timeout: float = 30.0) -> None:
         """Tick until something is so."""
@@ -37,7 +49,7 @@ class Driver:
         while not condition():
             if time.monotonic() > end:
                 raise AssertionError("the condition was not met in time")
-            self.frames()
+            self.blind_frames()
             time.sleep(0.002)
 
     def settled(self) -> None:

@@ -98,8 +98,15 @@ def start_app(folder: Path) -> Any:
 
     from inspector.app.app import FieldApp
 
+    class Blind(Driver):
+        """Lays out and draws nothing: the sizes are what is looked at."""
+
+        def frames(self, count: int = 1) -> None:
+            self.blind_frames(count)
+
     Config.set("graphics", "multisamples", "0")
-    return Driver(FieldApp(folder / "store.db", folder / "field-app.json", "tablet a"), SIZES[density][0])
+    Config.set("graphics", "maxfps", "0")
+    return Blind(FieldApp(folder / "store.db", folder / "field-app.json", "tablet a"), SIZES[density][0])
 
 
 if __name__ == "__main__":
