@@ -3,13 +3,12 @@
 from __future__ import annotations
 
 from bisect import bisect_right
-from collections.abc import Iterable
+from collections.abc import Mapping
 from typing import Final
 
 from models.bridge import Bar, Footbridge, Truss
 from models.condition.answers import speaks_of_bar
-from models.journal import Journal
-from models.journal_order import standing
+from models.journal_order import BarRecord
 
 Place = tuple[str, str]
 """Truss and bar."""
@@ -37,18 +36,19 @@ def _along(truss: Truss) -> list[Bar]:
     return sorted(truss.bars, key=key)
 
 
-def done_in(journal: Journal, visits: Iterable[str]) -> frozenset[Place]:
-    """The bars of which these visits (by id) say something: looked at, not seen, or found.
+def done_in(records: Mapping[Place, BarRecord], visit: int) -> frozenset[Place]:
+    """The bars of which a visit says something: looked at, not seen, or found.
 
-    What was taken back does not count.
+    Parameters
+    ----------
+    records : what stands about each bar; what was taken back is not in there.
+    visit : its index among the visits in date order.
     """
-    wanted = set(visits)
-    ids = {entry.id for visit in journal.visits if visit.id in wanted for entry in visit.entries}
     return frozenset(
         place
-        for place, record in standing(journal).records.items()
+        for place, record in records.items()
         if any(
-            placed.entry.id in ids and (placed.entry.seen is not None or speaks_of_bar(placed.entry))
+            placed.visit == visit and (placed.entry.seen is not None or speaks_of_bar(placed.entry))
             for placed in record.entries
         )
     )

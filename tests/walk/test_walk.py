@@ -6,6 +6,7 @@ import pytest
 
 from inspector import samples
 from models.journal import Entry, Journal, Visit
+from models.journal_order import standing
 from models.walk import done_in, walking_order
 
 
@@ -45,6 +46,7 @@ def test_a_bar_is_done_when_the_visit_says_something_of_it() -> None:
         Entry("5", "near", "e", "d", 5, retracts="4"),
     )
     old = Visit("old", "2020-01-01", (Entry("0", "near", "f", "d", 1, seen="hands on"),))
-    journal = Journal((old, Visit("new", "2022-01-01", entries)))
-    assert done_in(journal, ["new"]) == {("near", "a"), ("near", "b"), ("near", "c")}
-    assert done_in(journal, []) == frozenset()
+    records = standing(Journal((old, Visit("new", "2022-01-01", entries)))).records
+    assert done_in(records, 1) == {("near", "a"), ("near", "b"), ("near", "c")}
+    assert done_in(records, 0) == {("near", "f")}
+    assert done_in(records, 2) == frozenset()

@@ -315,8 +315,9 @@ class BridgePresenter:
         self._show(self.state)
 
     def _walk(self, now: _Open) -> Walk:
-        visit = now.day.visit
-        done = done_in(now.rated.journal, [visit.id] if visit else [])
+        visit, condition = now.day.visit, now.rated.condition
+        number = next((k for k, one in enumerate(condition.visits) if visit and one.id == visit.id), -1)
+        done = done_in(condition.records, number)
         here = now.order.index(now.place)
         flags = tuple(place in done for place in now.order)
         left = len(flags) - sum(flags)

@@ -4,6 +4,7 @@ from __future__ import annotations
 
 from collections.abc import Callable
 from dataclasses import replace
+from functools import cache
 
 from inspector import samples
 from inspector.app.bridges.state import BridgeRow, BridgesState
@@ -37,7 +38,7 @@ class BridgesPresenter:
     def enter(self) -> None:
         """List the bridges, then work out their figures one after the other."""
         self._put(message="")
-        self._work.ask(self._shelf.summaries, self._listed)
+        self._work.ask(lambda: (self._shelf.summaries(), sample_rows()), self._listed)
 
     def leave(self) -> None:
         """Nobody looks any more: no further figures are wanted."""
@@ -62,14 +63,15 @@ class BridgesPresenter:
         self._put(message="")
         self._opened(found)
 
-    def _listed(self, found: tuple[BridgeSummary, ...] | Failure) -> None:
-        if isinstance(found, Failure):
-            self._put(message=found.text)
+    def _listed(self, answer: tuple[tuple[BridgeSummary, ...], tuple[BridgeRow, ...]] | Failure) -> None:
+        if isinstance(answer, Failure):
+            self._put(message=answer.text)
             return
+        found, every_sample = answer
         known = {row.key: row.figure for row in self.state.rows}
         rows = tuple(BridgeRow(one.id, one.name, _about(one), known.get(one.id, "...")) for one in found)
         names = {row.name for row in rows}
-        invented = tuple(row for row in sample_rows() if row.name not in names)
+        invented = tuple(row for row in every_sample if row.name not in names)
         self._put(rows=rows, samples=invented)
         self._figure_of([row.key for row in rows])
 
@@ -101,8 +103,9 @@ class BridgesPresenter:
         self._show(self.state)
 
 
+@cache
 def sample_rows() -> tuple[BridgeRow, ...]:
-    """The invented footbridges."""
+    """The invented footbridges. Reading them takes long the first time."""
     rows = []
     for name in samples.names():
         bridge = samples.sample(name).bridge
