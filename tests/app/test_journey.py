@@ -5,10 +5,11 @@ from __future__ import annotations
 import json
 import os
 import shutil
+import signal
 import subprocess
 import sys
 import time
-from collections.abc import Iterator
+from collections.abc import Callable, Iterator
 from pathlib import Path
 from typing import Any
 
@@ -93,3 +94,15 @@ def test_the_command_saves_the_site_and_opens_it(screen_of_tests: None, tmp_path
         (bridge,) = store.bridges()
     assert (memory.bridge, bridge.name) == (bridge.id, samples.sample("three-supports").bridge.name)
     assert memory.bar is not None
+
+
+def test_what_was_shown_as_stored_outlives_a_kill(drive: Callable[..., Any], tmp_path: Path) -> None:
+    """Killed the moment the screen says `Stored`, the app opens again at the same bar with the entry on record."""
+    script = Path(__file__).with_name("killed.py")
+    environment = {name: value for name, value in os.environ.items() if not name.startswith("KIVY_")}
+    done = subprocess.run([sys.executable, str(script), str(tmp_path)], env=environment, timeout=300, check=False)
+    assert done.returncode == -signal.SIGKILL
+    d = drive()
+    d.settled()
+    assert d.app.bridge_screen.bar == "L3-L4"
+    assert d.button("At a distance").chosen
