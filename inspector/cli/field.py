@@ -18,9 +18,7 @@ def register(commands: typer.Typer) -> None:
 def field(
     site: Annotated[
         str | None,
-        typer.Argument(
-            metavar="[SITE]", help="A site file; it is saved into the store and opened.", show_default=False
-        ),
+        typer.Argument(metavar="SITE", help="A site file; it is saved into the store and opened.", show_default=False),
     ] = None,
     store: Annotated[
         Path | None, typer.Option(metavar="FILE", help="The store; else the one in the user's folder.")

@@ -7,19 +7,18 @@ from dataclasses import dataclass, field, replace
 from typing import Any
 
 from inspector.app.bridge.drawing import Wanted, draw, draw_again
+from inspector.app.bridge.headline import act_now_lines, remark_on, structure_text
 from inspector.app.bridge.pad import Pad
-from inspector.app.bridge.sheet import governs_text, sheet_of
+from inspector.app.bridge.sheet import sheet_of
 from inspector.app.bridge.state import OTHER, BridgeState, Choice, Walk
 from inspector.app.shelf import Shelf, Today, today_in
 from inspector.app.worker import Failure, Work
 from inspector.desk import Rated
 from inspector.visit import Logbook
-from models import words
 from models.journal import Entry, Reading
 from models.picture import Picture
 from models.picture.section import section_picture
 from models.picture.views import VIEWS
-from models.rating.result import Rating
 from models.section import built
 from models.walk import Place, done_in, walking_order
 from models.words import entries
@@ -28,7 +27,6 @@ RATING = "rating"
 DRAWING = "drawing"
 _STEP = 5
 _MOST_LOSS = 95
-_SHOWN_FINDINGS = 2
 
 
 @dataclass
@@ -309,7 +307,7 @@ class BridgePresenter:
             sheet=sheet_of(rated, now.place, visit.id if visit else None, before if now.about == now.place else None),
             walk=self._walk(now),
             can_undo=self._can_undo(now),
-            remark=_remark(now.day),
+            remark=remark_on(now.day),
         )
         self._remember(rated.bridge.id, *now.place, now.view)
         self._show(self.state)
@@ -331,35 +329,3 @@ class BridgePresenter:
         mine = {one.id for one in visit.entries if one.device == self._shelf.device and one.retracts is None}
         records = now.rated.condition.records.values()
         return any(placed.entry.id in mine for record in records for placed in record.entries)
-
-
-def structure_text(rating: Rating) -> str:
-    """The structure's lowest rating factor with what governs."""
-    found = rating.structure
-    level = rating.upper_level
-    value = found.rating_factor[level]
-    if found.bar is None:
-        return "0: a truss does not stand" if value == 0 else "no rating factor"
-    below = " below 1" if value is not None and value < 1 else ""
-    return f"{words.factor(value)}{below} ({found.truss} {found.bar}, {governs_text(found.check, found.load)})"
-
-
-def act_now_lines(rated: Rated) -> tuple[str, ...]:
-    """What to do and why, where a finding calls for it; empty where none does."""
-    found = [one.text for one in rated.rating.findings if one.level == "act now"]
-    if not found:
-        return ()
-    owner = rated.bridge.owner
-    calls = [" ".join(filter(None, (one.who, one.phone))) for one in (owner.call or () if owner else ())]
-    numbers = [f"Call: {words.listed(calls)}."] if calls else []
-    more = [f"{len(found) - _SHOWN_FINDINGS} more are in the report."] if len(found) > _SHOWN_FINDINGS else []
-    return (" ".join(words.ACT_NOW_STEPS), *numbers, " ".join([*found[:_SHOWN_FINDINGS], *more]))
-
-
-def _remark(day: Today) -> str:
-    if not day.shifted:
-        return ""
-    return (
-        f"This tablet's date lies before the last visit on record. Entries are dated {day.dated}, so that they count "
-        "last: put the tablet's date right."
-    )

@@ -7,7 +7,7 @@ from dataclasses import replace
 from pathlib import Path
 from typing import Any
 
-from inspector.app.bridge.presenter import act_now_lines, structure_text
+from inspector.app.bridge.headline import act_now_lines, structure_text
 from inspector.app.report.state import ReportState
 from inspector.app.shelf import Shelf
 from inspector.app.worker import Failure, Work
