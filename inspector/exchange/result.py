@@ -15,7 +15,7 @@ from inspector.exchange.form import Choice, Form, Json, Null, Number, Text, Whol
 from inspector.exchange.json_text import unusable
 from inspector.exchange.record import Key, Record
 from models.finding import LEVELS
-from models.rating.result import BarRating, Effect, Governing, Rating, TrussRating
+from models.rating.result import BarRating, Deflection, Effect, Governing, Rating, TrussRating
 from models.statics.stability import Verdict
 from models.words import CAUTION
 
@@ -125,6 +125,15 @@ _BAR: Final[Form[BarRating]] = _record(
     },
     optional=("imposed", "resistance inventory"),
 )
+_DEFLECTION: Final[Form[Deflection]] = _record(
+    {
+        "joint": (_TEXT, _of("joint")),
+        "size": (_FIGURE, _of("size")),
+        "limit": (_FIGURE, _of("limit")),
+        "load": (_TEXT, _of("load")),
+    },
+    {"size": "m", "limit": "span/360, or 1/220 of a cantilever arm, m"},
+)
 _TRUSS: Final[Form[TrussRating]] = _record(
     {
         "joints": (_COUNT, _of("joints")),
@@ -133,8 +142,16 @@ _TRUSS: Final[Form[TrussRating]] = _record(
         "degree": (_COUNT, _of("degree")),
         "mechanisms": (_COUNT, _of("mechanisms")),
         "verdict": (Choice(get_args(Verdict)), _of("verdict")),
+        "deflection": (_DEFLECTION, _of("deflection")),
+        "frequency": (_FIGURE, _of("frequency")),
     },
-    {"degree": "bars + reactions - 2 joints", "mechanisms": "independent motions"},
+    {
+        "degree": "bars + reactions - 2 joints",
+        "mechanisms": "independent motions",
+        "deflection": "of the deck joint that a crowd brings nearest to its limit; advisory",
+        "frequency": "lowest vertical one, with the mass of the dead load, Hz; advisory",
+    },
+    optional=("deflection", "frequency"),
 )
 _GOVERNING: Final[Form[Governing]] = _record(
     {

@@ -12,7 +12,7 @@ from inspector.report.style import BODY, NOTE, heading, part, table, text
 from models.bridge import Bar, Footbridge, Rectangle, Section, SectionDimension, Truss
 from models.quantity import Quantity
 from models.rating.result import Rating, TrussRating
-from models.words import Figures
+from models.words import Figures, significant
 
 
 def loads(rating: Rating, bridge: Footbridge, figures: Figures, width: float) -> list[Flowable]:
@@ -23,6 +23,7 @@ def loads(rating: Rating, bridge: Footbridge, figures: Figures, width: float) ->
     for name, truss in rating.trusses.items():
         story += heading(f"Truss {name}: dead load and reactions")
         story += _reactions(truss, figures, width)
+        story += _service(truss, figures)
     if len({name for bar in rating.bars for name in bar.live or {}}) > 1:
         story += _live(rating, figures, width)
     if any(bar.imposed is not None for bar in rating.bars):
@@ -56,6 +57,19 @@ def _reactions(truss: TrussRating, figures: Figures, width: float) -> list[Flowa
         )
     )
     return story
+
+
+def _service(truss: TrussRating, figures: Figures) -> list[Flowable]:
+    """Deflection and frequency, where there are any."""
+    said = []
+    if truss.deflection is not None:
+        joint, size, limit, load = truss.deflection
+        sizes = f"{figures.text(size, 'size')} (limit {figures.text(limit, 'size')})"
+        said.append(f"Deflection under {load}, nearest to its limit at {joint}: {sizes}.")
+    if truss.frequency is not None:
+        said.append(f"Lowest vertical frequency with the mass of the dead load: {significant(truss.frequency)} Hz.")
+    advice = "Both are advisory (AASHTO pedestrian guide 2009, 5 and 6, from memory) and enter no rating factor."
+    return [text(" ".join([*said, advice]), BODY)] if said else []
 
 
 def _difference(value: float, whole: float, figures: Figures) -> str:

@@ -253,6 +253,17 @@ LIVE_KINDS: Final[Mapping[str, LiveKind]] = {
 }
 
 
+def crowds(loads: tuple[LiveLoad, ...], floor: Floor, x: Array) -> dict[str, Pattern]:
+    """People on one truss's deck by the names of their loads, each crowd without the loads that act with it.
+
+    Parameters
+    ----------
+    x : (d,) deck joints, m.
+    """
+    found = {load.name: _crowd(load, floor, x) for load in loads if load.kind == "crowd"}
+    return {name: crowd for name, crowd in found.items() if crowd is not None}
+
+
 def patterns(loads: tuple[LiveLoad, ...], floor: Floor, x: Array) -> dict[str, Pattern | None]:
     """Each live load of a site ready for one truss's deck, by name, in order of the names.
 

@@ -29,6 +29,7 @@ class Answer:
     loads : names, in order. live : (loads, 2, m) largest tension, and largest compression (negative).
     supports : joints. support_dead : (2 + k, s). support_live : (loads, s) the least (most lifting) reaction.
     displacement : the largest under dead load and a full crowd, m.
+    flexibility : (m,) elongation of each bar under unit tension, m/N; None where forces do not superpose.
     """
 
     standing: Standing
@@ -41,6 +42,7 @@ class Answer:
     support_dead: Array
     support_live: Array
     displacement: float
+    flexibility: Array | None = None
 
 
 def joint_dead_load(prepared: PreparedTruss, stock: Stock) -> Array:
@@ -87,6 +89,7 @@ def solve(prepared: PreparedTruss, standing: Standing, stock: Stock, flexibility
         support_dead=support_dead,
         support_live=found[:, 1, bars:],
         displacement=_displacement(prepared, response, joint_load.sum(axis=0), flexibility[standing.kept]),
+        flexibility=np.where(np.isfinite(flexibility), flexibility, 0.0)[standing.kept],
     )
 
 

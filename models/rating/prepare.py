@@ -15,7 +15,7 @@ from models.condition import BarCondition
 from models.loading.dead import ASSUMED_CONNECTION_ALLOWANCE, deck_on_joints
 from models.loading.floor import floor_of
 from models.loading.imposed import misfits
-from models.loading.live import Pattern, patterns
+from models.loading.live import Pattern, crowds, patterns
 from models.rating.fitted import Fitted, Stock, fit, stock
 from models.statics.geometry import Geometry, geometry_of
 from models.statics.response import Response, respond
@@ -60,6 +60,7 @@ class PreparedTruss:
     effective_lengths : (2, m) K times length, in and out of plane, m.
     patterns : live loads by name; None for one that cannot be computed. kinds : of what acts in each of them.
     tributary : (d,) length of deck that each deck joint carries, m.
+    crowds : people on the deck by name, each crowd without the loads beside it.
     misfits : (k, m) how much too long each bar becomes under each change that the site imposes, m.
     """
 
@@ -72,6 +73,7 @@ class PreparedTruss:
     patterns: Mapping[str, Pattern | None]
     kinds: Mapping[str, frozenset[str]]
     tributary: Array
+    crowds: Mapping[str, Pattern]
     misfits: Array
     _standing: dict[frozenset[int], Standing] = field(default_factory=dict)
 
@@ -147,6 +149,7 @@ def _prepare_truss(bridge: Footbridge, truss: Truss) -> PreparedTruss:
         patterns=patterns(bridge.rating.live, floor_of(bridge, truss.name), x),
         kinds=_kinds(bridge.rating.live),
         tributary=np.append(panels, 0.0) / 2 + np.append(0.0, panels) / 2,
+        crowds=crowds(bridge.rating.live, floor_of(bridge, truss.name), x),
         misfits=misfits(bridge.rating, truss.name, geometry),
     )
 

@@ -12,7 +12,7 @@ from models import words
 from models.bridge import Footbridge
 from models.condition import Condition
 from models.finding import LEVELS, Finding
-from models.rating import findings
+from models.rating import findings, service
 from models.rating.assumptions import assumptions_of
 from models.rating.load_lines import load_lines
 from models.rating.outcome import Outcome, outcome_of
@@ -45,6 +45,7 @@ def rating_of(condition: Condition, outcomes: tuple[Outcome, ...], basis: Basis,
     found = [*findings.of_bridge(bridge, basis), *condition.findings]
     for outcome in outcomes:
         found.extend(findings.of_truss(bridge, outcome, trusses[outcome.name].reactions))
+    found.extend(service.notes(bridge, trusses))
     bars = tuple(chain.from_iterable(truss.bars for truss in trusses.values()))
     found.extend(chain.from_iterable(bar.findings for bar in bars))
     structure = governing(basis, outcomes, lambda outcome: outcome.solved)
@@ -73,6 +74,7 @@ def _truss_rating(bridge: Footbridge, outcome: Outcome) -> TrussRating:
     standing = outcome.standing
     geometry, stability = standing.geometry, standing.stability
     weights = outcome.dead_total
+    deflection, frequency = service.service_of(outcome)
     return TrussRating(
         name=outcome.name,
         joints=len(geometry.joints),
@@ -86,6 +88,8 @@ def _truss_rating(bridge: Footbridge, outcome: Outcome) -> TrussRating:
         bars=rows_of(outcome, findings.by_bar(bridge, outcome)),
         reactions=reactions_of(outcome),
         dead_total=weights,
+        deflection=deflection,
+        frequency=frequency,
     )
 
 

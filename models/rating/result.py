@@ -19,6 +19,15 @@ class Effect(NamedTuple):
     minimum: float
 
 
+class Deflection(NamedTuple):
+    """The deck joint that people bring nearest to its limit: how far it goes, and the limit, m."""
+
+    joint: str
+    size: float
+    limit: float
+    load: str
+
+
 class Resisted(NamedTuple):
     """Factored resistances in both directions, N, condition and system factors not in them."""
 
@@ -126,6 +135,7 @@ class TrussRating:
     moving_joints, loose_bars : of a mechanism: the joints that move, and the bars that join moving to
         still parts.
     dead_total : all dead load on this truss, N (components, wearing).
+    deflection, frequency : advisory, the latter vertical, of the dead load's mass, Hz; None where there is none.
     """
 
     name: str
@@ -140,6 +150,8 @@ class TrussRating:
     bars: tuple[BarRating, ...]
     reactions: tuple[Reaction, ...]
     dead_total: tuple[float, float]
+    deflection: Deflection | None = None
+    frequency: float | None = None
 
     @property
     def carries(self) -> bool:

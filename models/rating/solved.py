@@ -95,7 +95,7 @@ def solve_state(task: Task, removed: frozenset[int], flexibilities: tuple[Array,
     if not standing.stability.carries:
         return None
     if standing.response is not None:
-        flexibilities = flexibilities[:1]
+        flexibilities = flexibilities[-1:]  # no force depends on it; the softer one tells deflections
     solved = [_solve_once(task, standing, flexibility) for flexibility in flexibilities]
     return reduce(worse, solved)
 

@@ -128,6 +128,27 @@ def large_displacement(size: str, span: str) -> str:
     return f"Under dead load and a full crowd a joint moves {size}, more than {limit}; check the model."
 
 
+def sags(load: str, joint: str, size: str, limit: str) -> str:
+    """The deck goes further down under people than the guide would have it."""
+    return (
+        f"Under {load} joint {joint} goes {size}, more than the {limit} that the AASHTO pedestrian guide 2009, 5, "
+        "advises (from memory); deflection enters no rating factor."
+    )
+
+
+def swings(frequency: float, enough: float, weight: str) -> str:
+    """The bridge swings at the pace of people."""
+    by_weight = (
+        f"below the {significant(enough)} Hz that 2.86 ln(180 kip/W) asks"
+        if frequency < enough
+        else "not below what 2.86 ln(180 kip/W) asks"
+    )
+    return (
+        f"The vertical frequency is {significant(frequency)} Hz, below 3 Hz, and {by_weight} of a bridge that weighs "
+        f"{weight} (AASHTO pedestrian guide 2009, 6, from memory): people may make it swing. It enters no factor."
+    )
+
+
 def not_used(key: str, why: str) -> str:
     """A key that is read and kept, but enters no figure."""
     return f"`{key}` is read, not used: {why}"
