@@ -229,13 +229,26 @@ def test_where_two_bars_cross_a_second_tap_takes_the_other(drive: Drive) -> None
 
 
 def test_the_condition_view_shows_states(drive: Drive) -> None:
-    """The switch changes the figures, not the place of the drawing."""
+    """The switch changes the figures at the bars."""
     d = opened(drive)
     d.push("Condition")
     d.settled()
     picture = d.app.bridge_screen.drawing.elevation.picture
     assert any(text.text.startswith("fair") for text in picture.texts)
     assert d.button("Condition").chosen
+
+
+@pytest.mark.parametrize("view", ["Rating factor", "Condition"])
+@pytest.mark.parametrize("name", samples.names())
+def test_a_drawing_opens_with_letters_that_can_be_read(drive: Drive, name: str, view: str) -> None:
+    """Whatever the truss and the view, figures are 12 sp high or more as it opens, and the chosen bar is in sight."""
+    d = opened(drive, name)
+    d.push(view)
+    d.settled()
+    elevation = d.app.bridge_screen.drawing.elevation
+    assert elevation.picture.height * elevation.scale >= 11.9
+    start, end = elevation.pieces(["axis"])[d.app.bridge_screen.bar][0]
+    assert elevation.collide_point((start[0] + end[0]) / 2, (start[1] + end[1]) / 2)
 
 
 def test_the_other_truss_is_a_tap_away(drive: Drive) -> None:

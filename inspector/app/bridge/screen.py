@@ -97,7 +97,8 @@ class BridgeScreen(Screen):
 
     def _show_picture(self, state: BridgeState) -> None:
         elevation, thumb = self.drawing.elevation, self.sheet.thumb
-        seen = (state.title, state.truss)
+        # Each drawing opens with letters that can be read; an entry leaves it as it is zoomed.
+        seen = (state.title, state.truss, *(view.key for view in state.views if view.chosen))
         elevation.bar = thumb.bar = state.bar
         if state.picture is not None:
             elevation.picture = thumb.picture = state.picture
