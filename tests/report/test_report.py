@@ -13,7 +13,7 @@ from inspector.report import lowest_bars, make_report
 from models.bridge import Override, Recommendation
 from models.finding import Finding
 from models.journal import Journal
-from models.rating.result import Governing, Rating
+from models.rating.result import Deflection, Effect, Governing, Rating
 from models.words import CAUTION, factor
 
 STATUS = "PRELIMINARY – FOR REVIEW BY A LICENSED ENGINEER – NOT FOR POSTING"
@@ -273,3 +273,23 @@ def test_the_other_answer_stands_beside_the_headline() -> None:
     other = Governing({"inventory": 0.9, "operating": 1.23}, "upstream", "L0-L1", "tension yield", "crowd")
     pages = printed(replace(rating, if_cracked_bars_hold=other))
     assert "if cracked bars hold 1.23 upstream L0-L1 tension yield crowd" in pages.texts[1]
+
+
+def test_deflection_and_frequency_are_printed_as_advice() -> None:
+    """Both stand with the truss's loads, with the limit and its source, and say that no rating factor rests on them."""
+    rating = invented.rating(invented.bridge())
+    sags = Deflection("L1", 0.0123, 0.0167, "crowd")
+    trusses = {name: replace(truss, deflection=sags, frequency=4.321) for name, truss in rating.trusses.items()}
+    page = printed(replace(rating, trusses=trusses)).page_with("Deflection under crowd")
+    assert "nearest to its limit at L1: 12.3 mm (limit 16.7 mm)" in page
+    assert "mass of the dead load: 4.32 Hz. Both are advisory (AASHTO pedestrian guide 2009, 5 and 6" in page
+    assert "Deflection under" not in printed(rating).whole
+
+
+def test_forces_of_imposed_changes_have_their_table() -> None:
+    """A site that imposes something has a table of what it pulls and pushes in each bar; others have none."""
+    rating = invented.rating(invented.bridge())
+    changed = invented.with_bar(rating, "upstream", "L0-L1", imposed=Effect(12340.0, -5670.0))
+    page = printed(changed).page_with("Forces of imposed changes")
+    assert "upstream L0-L1 12.3 -5.67" in page
+    assert "Forces of imposed changes" not in printed(rating).whole
