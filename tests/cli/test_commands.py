@@ -17,7 +17,7 @@ from pypdf import PdfReader
 from inspector import desk
 from inspector.cli import app
 from models.resistance import LRFR, registry
-from models.words import CAUTION
+from models.words import CAUTION, significant
 
 ROOT = Path(__file__).parents[2]
 SITES = ROOT / "sample_sites"
@@ -147,6 +147,36 @@ def test_explain_prints_the_calculation_of_one_bar(inspector: Callable[..., Told
     assert "AASHTO LRFD 6.8.2.1" in out
     assert f"= {factor['operating']:.4f}" in out
     assert max(map(len, out.splitlines())) <= 100
+
+
+@pytest.mark.parametrize("name", sorted(registry.BASES))
+def test_each_basis_prints_its_levels_and_its_hand_check(
+    name: str, tmp_path: Path, inspector: Callable[..., Told]
+) -> None:
+    """The table has a column a level, and the hand check ends at the factors of the table at every level."""
+    path = site_with(tmp_path, basis=name)
+    code, out, _ = inspector("rate", path)
+    rated = desk.rate(desk.check(Path(path)))
+    row = next(bar for bar in rated.rating.bars if (bar.truss, bar.bar) == ("upstream", "L0-L1"))
+    assert code == 0
+    assert max(map(len, out.splitlines())) <= 100
+    assert re.search(rf"^ bar +known +state +{' +'.join(rated.rating.levels)} +check", out, re.MULTILINE)
+    code, out, _ = inspector("explain", path, "upstream/L0-L1")
+    assert (code, max(map(len, out.splitlines())) <= 100) == (0, True)
+    for level in rated.rating.levels:
+        factor = row.rating_factor[level]
+        assert f"RF {level} = " in out
+        assert f"= {significant(factor or 0.0, 5).rstrip('0')}" in out
+
+
+def test_explain_shows_the_capacity_of_both_levels_where_they_differ(
+    tmp_path: Path, inspector: Callable[..., Told]
+) -> None:
+    """By allowable stresses there is a capacity for each level; by load factors one for both."""
+    _, out, _ = inspector("explain", site_with(tmp_path, basis="allowable stress"), "upstream/L0-L1")
+    assert re.findall(r"^  (C(?: [a-z]+)?) =", out, re.MULTILINE) == ["C inventory", "C operating"]
+    _, out, _ = inspector("explain", PRATT, "upstream/L0-L1")
+    assert re.findall(r"^  (C(?: [a-z]+)?) =", out, re.MULTILINE) == ["C"]
 
 
 @pytest.mark.parametrize(
