@@ -233,7 +233,7 @@ def test_a_result_has_every_key_and_only_numbers_that_are_numbers(drawn: Labelle
     assert made.keys() >= KEYS
     assert made["trusses"].keys() == document["trusses"].keys()
     for truss in made["trusses"].values():
-        assert truss.keys() == {"joints", "bars", "reactions", "degree", "mechanisms", "verdict"}
+        assert truss.keys() >= {"joints", "bars", "reactions", "degree", "mechanisms", "verdict"}
     assert made["structure"].keys() == {"rating factor", "truss", "bar", "check", "load"}
     assert len(made["bars"]) == sum(len(truss["bars"]) for truss in expanded(document).values())
     names = {load["name"] for load in document["rating"]["live"]}
