@@ -95,7 +95,19 @@ class CrowdByLength:
         lines = np.divide(lines, size, out=np.zeros_like(lines), where=size > 0.0)
         blocks = [lines[first : first + _BLOCK] for first in range(0, len(lines), _BLOCK)]
         found = [_largest(level_sets(block, self.panels, self.hurts, self.relieves)) for block in blocks]
-        return np.concatenate(found) * size[:, 0] if found else np.zeros(0)
+        return np.concatenate([each.effect for each in found]) * size[:, 0] if found else np.zeros(0)
+
+    def worst(self, lines: Array) -> Stretches:
+        """Which people stand where they hurt most.
+
+        Parameters
+        ----------
+        lines : (n, d) influence ordinates at the deck joints; positive is what hurts.
+        """
+        size = np.abs(lines).max(axis=1, initial=0.0)
+        lines = np.divide(lines, size[:, None], out=np.zeros_like(lines), where=size[:, None] > 0.0)
+        found = _largest(level_sets(lines, self.panels, self.hurts, self.relieves))
+        return Stretches(found.effect * size, found.length, found.level * size)
 
     @property
     def everywhere(self) -> float:
@@ -103,12 +115,28 @@ class CrowdByLength:
         return self.hurts * float(en_pressure(self.panels.sum()))
 
 
-def _largest(sets: LevelSets) -> Array:
-    """(n,) the largest product of pressure and integral, N.
+@dataclass(frozen=True, eq=False)
+class Stretches:
+    """The worst crowd by length, for each influence line; (n,) each.
+
+    Parameters
+    ----------
+    effect : N. length : loaded, m. level : people stand where the line, times the width that counts, is above it.
+    """
+
+    effect: Array
+    length: Array
+    level: Array
+
+
+def _largest(sets: LevelSets) -> Stretches:
+    """The largest product of pressure and integral.
 
     It stands at an end of a smooth piece, where the pressure begins to fall, or where the product is stationary.
     """
-    worst: Array = (en_pressure(sets.length) * sets.integral).max(axis=1)
+    product = en_pressure(sets.length) * sets.integral
+    best, every = product.argmax(axis=1), np.arange(len(product))
+    worst, length, level = product[every, best], sets.length[every, best], sets.level[every, best]
     start, end = sets.length[:, :-1], sets.length[:, 1:]
     curved = (end > start) & (-np.diff(sets.level) > _LEVEL * sets.level[:, :1])
     for inside, place in (
@@ -118,8 +146,13 @@ def _largest(sets: LevelSets) -> Array:
         line, number = np.nonzero(inside)
         pieces = _Pieces.of(sets, line, number)
         at = place(pieces)
-        np.maximum.at(worst, line, en_pressure(at) * pieces.integral_at(at))
-    return worst
+        effect = en_pressure(at) * pieces.integral_at(at)
+        better = effect > worst[line]
+        np.maximum.at(worst, line, effect)
+        chosen = better & (effect == worst[line])
+        length[line[chosen]] = at[chosen]
+        level[line[chosen]] = (pieces.level - pieces.fall * (at - pieces.start))[chosen]
+    return Stretches(worst, length, level)
 
 
 @dataclass(frozen=True, eq=False)
