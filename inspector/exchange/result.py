@@ -106,6 +106,7 @@ _BAR: Final[Form[BarRating]] = _record(
         "load": (_TEXT_OR_NULL, _of("load")),
         "loss allowance": (_FIGURE_OR_NULL, _of("loss_allowance")),
         "without it": (_WITHOUT, _of("without_it")),
+        "slack": (Items(_TEXT), lambda bar: bar.slack or None),
     },
     {
         "state": "last on record",
@@ -122,8 +123,9 @@ _BAR: Final[Form[BarRating]] = _record(
         "load": "the live load that governs at the upper level",
         "loss allowance": "fraction of every plate's remaining thickness that could go before the factor falls to 1",
         "without it": "lowest rating factor of the other bars without this one, or `mechanism`",
+        "slack": "bars of the truss that cannot push and go slack under what governs this one, where there are any",
     },
-    optional=("imposed", "resistance inventory"),
+    optional=("imposed", "resistance inventory", "slack"),
 )
 _DEFLECTION: Final[Form[Deflection]] = _record(
     {

@@ -88,7 +88,7 @@ def solve(prepared: PreparedTruss, standing: Standing, stock: Stock, flexibility
         supports=supports,
         support_dead=support_dead,
         support_live=found[:, 1, bars:],
-        displacement=_displacement(prepared, response, joint_load.sum(axis=0), flexibility[standing.kept]),
+        displacement=largest_displacement(prepared, response, joint_load.sum(axis=0), flexibility[standing.kept]),
         flexibility=np.where(np.isfinite(flexibility), flexibility, 0.0)[standing.kept],
     )
 
@@ -103,11 +103,17 @@ def _without_noise(force: Array, noise: float) -> Array:
     return np.where(np.abs(force) <= noise * np.abs(force).max(initial=0.0), 0.0, force)
 
 
-def _displacement(prepared: PreparedTruss, response: Response, dead: Array, flexibility: Array) -> float:
+def full_crowd(prepared: PreparedTruss) -> Array:
+    """(d,) downward force on each deck joint of the heaviest crowd on the whole deck, N."""
+    crowds = [pattern.everywhere for pattern in prepared.patterns.values() if isinstance(pattern, CROWDS)]
+    load: Array = max(crowds, default=0.0) * prepared.tributary
+    return load
+
+
+def largest_displacement(prepared: PreparedTruss, response: Response, dead: Array, flexibility: Array) -> float:
     """Largest elastic displacement of a joint under dead load and a crowd on the whole deck, m (virtual work)."""
     down = dead.copy()
-    crowds = [pattern.everywhere for pattern in prepared.patterns.values() if isinstance(pattern, CROWDS)]
-    down[prepared.geometry.deck] += max(crowds, default=0.0) * prepared.tributary
+    down[prepared.geometry.deck] += full_crowd(prepared)
     forces = -response.forces[:, 1::2] @ down
     finite = np.where(np.isfinite(flexibility), flexibility, 0.0)
     movement = (response.forces.T @ (finite * forces)).reshape(-1, 2)

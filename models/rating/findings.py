@@ -74,12 +74,15 @@ def _dead_alone(outcome: Outcome, figures: Figures, bridge: Footbridge) -> _Foun
         yield number, "act now", sentences.dead_exceeds(_bar(outcome, number).id, name, figures.text(excess, "force"))
 
 
-def _pushed(outcome: Outcome, figures: Figures, bridge: Footbridge) -> _Found:
-    if outcome.solved is None or not any(bar.tension_only for bar in outcome.prepared.truss.bars):
+def _slack(outcome: Outcome, figures: Figures, bridge: Footbridge) -> _Found:
+    """Bars that cannot push and go slack under what governs any bar of their truss, their own panel's others too."""
+    parts = outcome.solved.figures.slack if outcome.solved else None
+    if parts is None:
         return
-    for number, bar in enumerate(outcome.prepared.truss.bars):
-        if bar.tension_only and outcome.solved.figures.acts[1, number]:
-            yield number, "left out", sentences.pushed(bar.id)
+    bars = outcome.prepared.truss.bars
+    for number in np.flatnonzero(parts.slack.any(axis=0)).tolist():
+        governed = tuple(bars[other].id for other in np.flatnonzero(parts.slack[:, number]).tolist())
+        yield number, "note", sentences.goes_slack(bars[number].id, governed, len(bars))
 
 
 def _compression_leaves_out(outcome: Outcome, figures: Figures, bridge: Footbridge) -> _Found:
@@ -156,7 +159,7 @@ def _may_be_pushed(outcome: Outcome, number: int) -> bool:
 
 
 _PARTS: Final[tuple[_Part, ...]] = (
-    _gone, _dead_alone, _pushed, _compression_leaves_out, _frames, _deck_on_chord, _slender_plates, _slenderness,
+    _gone, _dead_alone, _slack, _compression_leaves_out, _frames, _deck_on_chord, _slender_plates, _slenderness,
 )  # fmt: skip
 
 
@@ -179,7 +182,41 @@ def of_truss(bridge: Footbridge, outcome: Outcome, reactions: tuple[Reaction, ..
         size = figures.text(largest, "size")
         text = sentences.large_displacement(size, figures.text(span, "length"))
         yield Finding("doubtful", text, outcome.name)
+    yield from _without_pushing(outcome)
     yield from _double_bars(outcome.prepared)
+
+
+def _without_pushing(outcome: Outcome) -> Iterator[Finding]:
+    """Where bars cannot push: panels that no rod holds, the end of equilibrium, what is not known."""
+    truss, stability = outcome.prepared.truss, outcome.standing.stability
+    cannot = tuple(bar.id for number, bar in enumerate(truss.bars) if bar.tension_only and number not in outcome.out)
+    if cannot and not stability.carries and outcome.prepared.standing(outcome.out).stability.carries:
+        yield Finding("act now", sentences.would_have_to_push(outcome.name, cannot), outcome.name)
+    parts = outcome.solved.figures.slack if outcome.solved else None
+    if parts is None or outcome.solved is None:
+        return
+    if parts.undecided:
+        yield Finding("left out", sentences.not_decided(outcome.name), outcome.name)
+    if parts.ends.any():
+        load = int(outcome.solved.figures.load[int(parts.ends.argmax())])
+        name = outcome.solved.loads[load] if load >= 0 else None
+        factor = float(outcome.solved.figures.lowest[-1][parts.ends].min())
+        yield Finding("note", sentences.equilibrium_ends(outcome.name, factor, name), outcome.name)
+    for rods in _panels_of_rods(outcome):
+        number = next((row for row, slack in enumerate(parts.slack[:, list(rods)]) if slack.all()), None)
+        if number is not None:
+            names = tuple(truss.bars[rod].id for rod in rods)
+            yield Finding("note", sentences.panel_slack(names, truss.bars[number].id), outcome.name)
+
+
+def _panels_of_rods(outcome: Outcome) -> list[tuple[int, ...]]:
+    """Bars that cannot push by the stretch of the bridge that they cross, where there are several."""
+    geometry = outcome.prepared.geometry
+    x = np.sort(geometry.coordinates[geometry.ends, 0], axis=1)
+    by_stretch: dict[tuple[float, ...], list[int]] = defaultdict(list)
+    for number in np.flatnonzero(outcome.prepared.tension_only).tolist():
+        by_stretch[tuple(x[number].tolist())].append(number)
+    return [tuple(rods) for rods in by_stretch.values() if len(rods) > 1]
 
 
 def _double_bars(prepared: PreparedTruss) -> Iterator[Finding]:

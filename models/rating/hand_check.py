@@ -12,6 +12,7 @@ from dataclasses import dataclass
 import numpy as np
 
 from models.calculation import Array, HandCheck, Number, Sheet, Step, greatest
+from models.rating.hand_check_slack import write_with_slack_bars
 from models.rating.outcome import Outcome
 from models.resistance.protocol import DeadFactors, Level, Member
 from models.section import write_plates, write_section
@@ -124,6 +125,9 @@ def _write_factor(outcome: Outcome, number: int, direction: int, resisted: Mappi
     name = ("tension", "compression")[direction]
     capacities = _write_capacities(outcome, number, direction, resisted, sheet)
     capacity = capacities[len(basis.levels) - 1]
+    parts = figures.slack
+    if parts is not None and (parts.ends[number] or np.isfinite(parts.dead[-1, number])):
+        return write_with_slack_bars(outcome, solved, parts, number, name, capacities, _live_factor, sheet)
     dead = _write_dead(outcome, figures.dead[:, number], direction, sheet)
     load = int(figures.load[number])
     if load < 0:

@@ -10,6 +10,7 @@ from models.calculation import Array
 from models.condition import BarCondition, Profile
 from models.rating.answer import joint_dead_load
 from models.rating.prepare import Prepared, PreparedTruss, Standing
+from models.rating.slack_fallen import standing_under_dead_load
 from models.rating.solved import Solved, Task, solve_state, worse
 from models.rating.strength import Strength, padded, strength_of
 from models.resistance.protocol import Basis
@@ -48,6 +49,11 @@ class Outcome:
     def prepared(self) -> PreparedTruss:
         """The truss that this is the outcome of."""
         return self.task.prepared
+
+    @property
+    def out(self) -> frozenset[int]:
+        """Bars that are not in the truss as it stands."""
+        return frozenset(range(len(self.conditions))) - frozenset(self.standing.kept.tolist())
 
     @property
     def dead_total(self) -> tuple[float, float]:
@@ -97,13 +103,20 @@ def _evaluate(
 ) -> _Evaluated:
     """The truss without the removed bars; slack bars both in and out, the lower answer counts."""
     pulling = solve_state(task, removed, flexibilities)
-    standing = task.prepared.standing(removed)
     if not slack or pulling is None:
-        return _Evaluated(standing, pulling, pulling)
+        return _Evaluated(_standing(task, removed, pulling, flexibilities), pulling, pulling)
     hanging = solve_state(task, removed | slack, flexibilities)
     if hanging is None:
-        return _Evaluated(task.prepared.standing(removed | slack), None, pulling)
-    return _Evaluated(standing, worse(pulling, hanging), pulling)
+        return _Evaluated(_standing(task, removed | slack, hanging, flexibilities), None, pulling)
+    return _Evaluated(task.prepared.standing(removed), worse(pulling, hanging), pulling)
+
+
+def _standing(task: Task, removed: frozenset[int], solved: Solved | None, flexibilities: tuple[Array, ...]) -> Standing:
+    """The truss as it stands; where it was not solved, with the reason."""
+    standing = task.prepared.standing(removed)
+    if solved is not None:
+        return standing
+    return standing_under_dead_load(task.prepared, standing, task.stock, flexibilities[0])
 
 
 def _cracked_in_tension(

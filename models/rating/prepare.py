@@ -4,6 +4,7 @@ from __future__ import annotations
 
 from collections.abc import Mapping
 from dataclasses import dataclass, field
+from functools import cached_property
 from typing import Final
 
 import numpy as np
@@ -76,6 +77,11 @@ class PreparedTruss:
     crowds: Mapping[str, Pattern]
     misfits: Array
     _standing: dict[frozenset[int], Standing] = field(default_factory=dict)
+
+    @cached_property
+    def tension_only(self) -> NDArray[np.bool_]:
+        """(m,) which bars cannot push."""
+        return np.array([bool(bar.tension_only) for bar in self.truss.bars], bool)
 
     def standing(self, removed: frozenset[int]) -> Standing:
         """The truss without some of its bars; worked out once for each set."""

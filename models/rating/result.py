@@ -57,6 +57,7 @@ class BarRating(NamedTuple):
     loss_allowance : fraction of every plate's remaining thickness that could still go.
     without_it : ``mechanism``, or the lowest rating factor of the truss's other bars.
     imposed : the sums of what imposed changes pull, and push, N, unfactored; None where nothing is imposed.
+    slack : bars of the truss that go slack under what governs this one.
     lower_levels : by level: the resistance at a level below the upper one that has its own.
     """
 
@@ -90,6 +91,7 @@ class BarRating(NamedTuple):
     findings: tuple[Finding, ...] = ()
     lower_levels: Mapping[str, Resisted] = MappingProxyType({})
     imposed: Effect | None = None
+    slack: tuple[str, ...] = ()
 
     @property
     def demand_over_capacity(self) -> float | None:

@@ -18,6 +18,10 @@ from models.rating.solved import Figures
 from models.rating.strength import CHECKS
 from models.resistance.protocol import Basis
 
+EQUILIBRIUM: Final = "equilibrium"
+"""The check of bars whose truss has no equilibrium beyond some multiple of a live load, as bars would have to push that
+cannot."""
+
 _DIRECTIONS: Final[tuple[Literal["tension", "compression"], ...]] = ("tension", "compression")
 
 
@@ -78,7 +82,16 @@ class _Table:
             "state": [now.state for now in conditions],
             "known": list(known),
             "findings": [findings.get(bar.id, ()) for bar in bars],
+            "slack": self._slack(),
         }
+
+    def _slack(self) -> list[tuple[str, ...]]:
+        """The bars that go slack under what governs each bar."""
+        slack = self.figures.slack if self.figures else None
+        if slack is None:
+            return [()] * self.count
+        names = [bar.id for bar in self.outcome.prepared.truss.bars]
+        return [tuple(names[other] for other in np.flatnonzero(row).tolist()) for row in slack.slack]
 
     def strength(self) -> _Columns:
         """Sizes, resistances and the factors on them."""
@@ -217,6 +230,8 @@ def _governs(outcome: Outcome, figures: Figures, number: int) -> tuple[str, str 
     load = int(figures.load[number])
     if load < 0 or outcome.solved is None:
         return "dead load", None
+    if figures.slack is not None and figures.slack.ends[number]:
+        return EQUILIBRIUM, outcome.solved.loads[load]
     check = outcome.task.strength.check[figures.direction[number], number]
     return CHECKS[check], outcome.solved.loads[load]
 

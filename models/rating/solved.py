@@ -4,7 +4,6 @@ from __future__ import annotations
 
 from dataclasses import dataclass, fields
 from functools import reduce
-from typing import Any
 
 import numpy as np
 from numpy.typing import NDArray
@@ -12,11 +11,12 @@ from numpy.typing import NDArray
 from models.calculation import Array
 from models.rating.allowance import loss_allowance
 from models.rating.answer import Answer, solve
-from models.rating.factor import acts, demands, live_factors, rating_factors
+from models.rating.factor import live_factors
 from models.rating.fitted import Stock
 from models.rating.prepare import PreparedTruss, Standing
+from models.rating.slack import Asked, is_pushed, solve_slack
 from models.rating.strength import Strength
-from models.rating.without import factors_without
+from models.rating.worked import SlackParts, Worked, no_slack, spread, superposed
 from models.resistance.protocol import Basis
 
 
@@ -47,11 +47,12 @@ class Figures:
 
     Parameters
     ----------
-    dead : (2, m). live : (loads, 2, m). demand : (2, m) factored, upper level, N.
+    dead : (2 + k, m) as in `answer.Answer`. live : (loads, 2, m). demand : (2, m) factored, upper level, N.
     acts : (2, m) whether factored loads of any level pull it, and push it.
     lowest : (levels, m) rating factor, infinite where there is none.
     direction, load : (m,) what governs, as in `factor.Factors`. dead_exceeds : (2, m).
     allowance : (m,). without : (m,) NaN for a mechanism.
+    slack : what is known only where bars go slack; None where superposition holds.
     """
 
     dead: Array
@@ -64,6 +65,7 @@ class Figures:
     dead_exceeds: NDArray[np.bool_]
     allowance: Array
     without: Array
+    slack: SlackParts | None = None
 
 
 @dataclass(frozen=True, eq=False)
@@ -97,7 +99,8 @@ def solve_state(task: Task, removed: frozenset[int], flexibilities: tuple[Array,
     if standing.response is not None:
         flexibilities = flexibilities[-1:]  # no force depends on it; the softer one tells deflections
     solved = [_solve_once(task, standing, flexibility) for flexibility in flexibilities]
-    return reduce(worse, solved)
+    known = [each for each in solved if each is not None]
+    return reduce(worse, known) if len(known) == len(solved) else None
 
 
 def worse(one: Solved, other: Solved) -> Solved:
@@ -114,7 +117,8 @@ def _worse(one: Figures, other: Figures) -> Figures:
     first, second = (np.nan_to_num(figures.lowest[-1], nan=np.inf, posinf=np.inf) for figures in (one, other))
     known = np.isnan(one.lowest[-1]) & ~np.isnan(other.lowest[-1])
     take = (second < first) | known
-    pairs = {entry.name: (getattr(one, entry.name), getattr(other, entry.name)) for entry in fields(Figures)}
+    names = [entry.name for entry in fields(Figures) if entry.name != "slack"]
+    pairs = {name: (getattr(one, name), getattr(other, name)) for name in names}
     chosen = {name: np.where(take, b, a) for name, (a, b) in pairs.items()}
     chosen["acts"] = one.acts | other.acts
     chosen["allowance"] = np.fmin(one.allowance, other.allowance)
@@ -123,19 +127,22 @@ def _worse(one: Figures, other: Figures) -> Figures:
     chosen["without"] = np.where(
         out, one.without, np.where(known, other.without, np.minimum(one.without, other.without))
     )
-    return Figures(**chosen)
+    return Figures(**chosen, slack=_worse_slack(one, other, take))
 
 
-def _solve_once(task: Task, standing: Standing, flexibility: Array) -> Solved:
-    kept = standing.kept
-    answer = solve(task.prepared, standing, task.stock, flexibility)
-    capacity = task.capacity
-    gamma = live_factors(task.basis, [task.prepared.kinds[load] for load in answer.loads])
-    demand, whole = np.full((2, len(task.stock.area)), np.nan), len(task.stock.area)
-    demand[:, kept] = demands(task.basis, answer.dead, answer.live, gamma[-1])
-    redundancy = np.zeros(whole)
-    redundancy[kept] = answer.response.redundancy
-    factors = rating_factors(task.basis, capacity[:, :, kept], answer.dead, answer.live, gamma)
+def _worse_slack(one: Figures, other: Figures, take: NDArray[np.bool_]) -> SlackParts | None:
+    if one.slack is None and other.slack is None:
+        return None
+    nothing = no_slack(*one.lowest.shape)
+    return (one.slack or nothing).where(take, other.slack or nothing)
+
+
+def _solve_once(task: Task, standing: Standing, flexibility: Array) -> Solved | None:
+    kept, whole = standing.kept, len(task.stock.area)
+    found = _work(task, standing, flexibility)
+    if found is None:
+        return None
+    demand, redundancy = spread(found.demand, kept, whole), spread(found.redundancy, kept, whole, 0.0)
     allowance = loss_allowance(
         task.basis,
         task.stock,
@@ -145,25 +152,33 @@ def _solve_once(task: Task, standing: Standing, flexibility: Array) -> Solved:
         np.nan_to_num(demand),
         redundancy,
     )
+    lowest = spread(found.lowest, kept, whole)
+    if found.slack is not None:
+        allowance = np.where(lowest[-1] < 1.0, 0.0, allowance)
     figures = Figures(
-        dead=_spread(answer.dead, kept, whole),
-        live=_spread(answer.live, kept, whole),
+        dead=spread(found.answer.dead, kept, whole),
+        live=spread(found.answer.live, kept, whole),
         demand=demand,
-        acts=_spread(acts(task.basis, answer.dead, answer.live, gamma), kept, whole, 0),
-        lowest=_spread(factors.lowest, kept, whole),
-        direction=_spread(factors.direction, kept, whole, -1),
-        load=_spread(factors.load, kept, whole, -1),
-        dead_exceeds=_spread(factors.dead_exceeds, kept, whole, 0),
-        allowance=np.where(np.isinf(_spread(factors.lowest[-1], kept, whole)), np.inf, allowance),
-        without=_spread(factors_without(task.basis, task.prepared, answer, capacity[:, :, kept], gamma), kept, whole),
+        acts=spread(found.acts, kept, whole, 0),
+        lowest=lowest,
+        direction=spread(found.direction, kept, whole, -1),
+        load=spread(found.load, kept, whole, -1),
+        dead_exceeds=spread(found.dead_exceeds, kept, whole, 0),
+        allowance=np.where(np.isinf(lowest[-1]), np.inf, allowance),
+        without=spread(found.without, kept, whole),
+        slack=found.slack.among_all(kept, whole) if found.slack else None,
     )
-    return Solved(standing, (answer,), figures)
+    return Solved(standing, (found.answer,), figures)
 
 
-def _spread(values: NDArray[Any], kept: NDArray[np.int64], whole: int, empty: float = np.nan) -> NDArray[Any]:
-    """Values of the bars that are in, at their places among all bars."""
-    if len(kept) == whole:
-        return values
-    spread = np.full((*values.shape[:-1], whole), empty, dtype=values.dtype)
-    spread[..., kept] = values
-    return spread
+def _work(task: Task, standing: Standing, flexibility: Array) -> Worked | None:
+    """Forces and factors; None where dead load has no equilibrium unless a bar pushes that cannot."""
+    kept = standing.kept
+    answer = solve(task.prepared, standing, task.stock, flexibility)
+    capacity = task.capacity[:, :, kept]
+    gamma = live_factors(task.basis, [task.prepared.kinds[load] for load in answer.loads])
+    cannot_push = task.prepared.tension_only[kept]
+    if is_pushed(answer, cannot_push):
+        asked = Asked(task.basis, task.prepared, task.stock, answer, flexibility[kept], cannot_push, capacity, gamma)
+        return solve_slack(asked)
+    return superposed(task.basis, task.prepared, answer, capacity, gamma)

@@ -65,15 +65,21 @@ def judge(geometry: Geometry) -> Stability:
     rank = int((values > RANK_TOLERANCE * largest).sum())
     mechanisms, self_stress = equations - rank, bars - rank
     if mechanisms:
-        return Stability("mechanism", mechanisms, self_stress, np.inf, *_motion(geometry, left[:, rank:]))
+        return Stability("mechanism", mechanisms, self_stress, np.inf, *motion(geometry, left[:, rank:]))
     condition = float(largest / values[-1]) if len(values) else 1.0
     if condition > WORST_CONDITION:
-        return Stability("nearly a mechanism", 0, self_stress, condition, *_motion(geometry, left[:, -1:]))
+        return Stability("nearly a mechanism", 0, self_stress, condition, *motion(geometry, left[:, -1:]))
     still = np.zeros(len(geometry.joints), bool), np.zeros(bars, bool)
     return Stability("redundant" if self_stress else "determinate", 0, self_stress, condition, *still)
 
 
-def _motion(geometry: Geometry, modes: Array) -> tuple[NDArray[np.bool_], NDArray[np.bool_]]:
+def motion(geometry: Geometry, modes: Array) -> tuple[NDArray[np.bool_], NDArray[np.bool_]]:
+    """Which joints move, and which bars join a moving joint to a still one.
+
+    Parameters
+    ----------
+    modes : (free degrees of freedom, k) motions.
+    """
     displacement = np.zeros((2 * len(geometry.joints), modes.shape[1]))
     displacement[~geometry.held] = modes
     size = np.sqrt((displacement.reshape(len(geometry.joints), -1) ** 2).sum(axis=1))

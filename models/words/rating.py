@@ -52,11 +52,39 @@ def below_trigger(bar: str, found: float, trigger: float) -> str:
     return f"{bar} has a rating factor of {factor(found)}, below {limit}."
 
 
-def pushed(bar: str) -> str:
-    """A bar that cannot push is pushed."""
+def goes_slack(bar: str, governed: tuple[str, ...], of: int) -> str:
+    """A bar that cannot push leaves the truss under some loads."""
+    where = f"of {listed(governed)}" if len(governed) <= 3 else f"of {len(governed)} of the {of} bars"
+    return f"{bar} can only pull. It goes slack under the loads that govern the rating factor {where}."
+
+
+def panel_slack(rods: tuple[str, ...], governed: str) -> str:
+    """No rod of a panel pulls."""
+    return f"{listed(rods)} are all slack under the loads that govern {governed}."
+
+
+def would_have_to_push(truss: str, bars: tuple[str, ...]) -> str:
+    """Dead load has no equilibrium unless bars push that cannot."""
     return (
-        f"{bar} can only pull, but the loads push it. It is solved as if it could push; its forces and those of its "
-        "neighbours leave out that it would go slack."
+        f"Under its dead load truss {truss} would need a push from bars that can only pull ({listed(bars)}); without "
+        "it there is no equilibrium."
+    )
+
+
+def equilibrium_ends(truss: str, at: float, load: str | None) -> str:
+    """A live load can grow no further, whatever the bars bear."""
+    what = f"{factor(at)} times the factored {load}" if load else "its factored dead load"
+    return (
+        f"Truss {truss} has no equilibrium beyond {what}, as bars would have to push that can only pull. That limits "
+        "every bar whose own rating factor is higher; its check reads `equilibrium`."
+    )
+
+
+def not_decided(truss: str) -> str:
+    """Some states could not be found."""
+    return (
+        f"Under some arrangements of load on truss {truss} it could not be decided which bars go slack; they are left "
+        "out, so that the rating factors may be too high."
     )
 
 

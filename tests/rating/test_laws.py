@@ -210,7 +210,7 @@ INSIDE = {"dead": {"components", "wearing"}, "resistance": {"tension", "compress
 LEVELS = {"inventory", "operating"}
 CHECKS = {
     "tension yield", "tension fracture", "flexural buckling", "flexural-torsional buckling", "bow and shift",
-    "axial and bending", "dead load", "severed", "cracked", None,
+    "axial and bending", "dead load", "severed", "cracked", "equilibrium", None,
 }  # fmt: skip
 
 

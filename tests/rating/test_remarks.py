@@ -80,14 +80,15 @@ def test_a_bridge_without_live_loads_has_no_factors() -> None:
         assert row.dead_components is not None
 
 
-def test_a_bar_that_cannot_push_is_told_of_when_it_is_pushed() -> None:
-    """A rod that the loads push is solved as if it could, and the finding at its bar says so; others say nothing."""
-    document = short()
-    for name in ("L0-U1", "L1-L2"):
+def test_a_bar_that_goes_slack_is_told_of() -> None:
+    """A rod that loads would push says in a note that it goes slack; one that is always pulled says nothing."""
+    document = short(crossed=True)
+    for name in ("L1-U2", "L1-L2"):
         bar_of(document, name)["tension only"] = True
     rating = rated(document)
-    assert any("can only pull, but the loads push it" in text for text in texts(rating, "left out", "L0-U1"))
-    assert texts(rating, "left out", "L1-L2") == []
+    assert any("can only pull. It goes slack" in text for text in texts(rating, "note", "L1-U2"))
+    assert not any("can only pull" in text for text in texts(rating, "note", "L1-L2"))
+    assert {name for bar in rating.bars for name in bar.slack} == {"L1-U2"}
 
 
 @pytest.mark.parametrize(("given", "used"), [(None, 2.0), (1.0, 2.0), (3.0, 3.0)])

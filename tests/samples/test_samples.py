@@ -172,8 +172,8 @@ def test_the_warren_sample_depends_on_an_assumed_connection() -> None:
     assert f"yield would govern, at {figures(bar)[0]} (inventory)" in document["notes"]
 
 
-def test_the_iron_sample_is_redundant_and_pushes_its_rods() -> None:
-    """The crossed sample keeps carrying without its governing tie, and says that its rods are pushed."""
+def test_the_iron_sample_is_redundant_and_its_rods_go_slack() -> None:
+    """The crossed sample keeps carrying without its governing tie, and says which of its rods go slack, and when."""
     found = rating("wrought-iron-crossed")
     notes = sample("wrought-iron-crossed").bridge.notes or ""
     assert {truss.verdict for truss in found.trusses.values()} == {"redundant"}
@@ -183,9 +183,10 @@ def test_the_iron_sample_is_redundant_and_pushes_its_rods() -> None:
         assert isinstance(remains, float)
         assert significant(remains) in notes
     rods = {bar.id for bar in sample("wrought-iron-crossed").bridge.trusses["upstream"].bars if bar.tension_only}
-    pushed = {finding.bar for finding in found.findings if "can only pull" in finding.text}
-    assert pushed
-    assert pushed <= rods
+    slack = {finding.bar for finding in found.findings if "can only pull" in finding.text}
+    assert slack == rods == {rod for bar in found.bars for rod in bar.slack}
+    assert len(rows["downstream", "L4-U4"].slack) == 2
+    assert "L4-U4, say, is rated with two of them slack" in notes
 
 
 def test_the_severed_hanger_makes_one_truss_a_mechanism_and_leaves_the_other_rated() -> None:
